@@ -40,8 +40,13 @@ export default tseslint.config(
         { allowNumber: true, allowBoolean: true },
       ],
       // `onClick={() => setOpen(true)}` says what it does
-      '@typescript-eslint/no-confusing-void-expression': ['error', { ignoreArrowShorthand: true }],
+      '@typescript-eslint/no-confusing-void-expression': [
+        'error',
+        { ignoreArrowShorthand: true, ignoreVoidReturningFunctions: true },
+      ],
       '@typescript-eslint/no-misused-promises': ['error', { checksVoidReturn: { attributes: false } }],
+      // spreading text into its code points is what reading feet and inches needs
+      '@typescript-eslint/no-misused-spread': ['error', { allow: ['string'] }],
       eqeqeq: 'error',
       'no-console': 'error',
       'max-lines': ['error', { max: 400 }],
