@@ -228,7 +228,7 @@ export const memberDocumentSchema = z
   .object({
     schema: z.literal(1, { error: 'schema must be 1' }),
     title: text('The title').default(''),
-    length: positive('The length').lte(1e7, { error: 'The length may be 10 000 000 mm at most' }),
+    length: number('The length').gte(1, { error: 'The length must be 1 mm or more' }).lte(1e7, { error: 'The length may be 10 000 000 mm at most' }),
     supports: list(supportSchema, 'The supports', documentLimits.supports).min(1, {
       error: 'The beam has no support: add two pins or rollers, or a fixed end',
     }),

@@ -1,0 +1,272 @@
+import { evaluate, maximum, upperBound } from '../numeric/polynomial';
+import type { Beam, CombinedLoads } from './combinations';
+import type { InfluenceLine } from './influence';
+import type { Station, StationValues } from './stations';
+import { trainExtremes } from './train';
+
+/** Where offset 0 of a train stands; `train` counts the beam's trains. */
+export interface Position {
+  train: number;
+  x: number;
+}
+
+/** A largest magnitude, signed, with what brings it about. */
+export interface Extreme {
+  value: number;
+  x: number;
+  /** which side of x, where the quantity jumps */
+  side: -1 | 1;
+  /** index of the combination, −1 where the value is nothing everywhere */
+  combination: number;
+  positions: Position[];
+}
+
+/** Two values are the same where they agree to nine digits; then the earlier combination, then the smaller x counts. */
+const same = 1 + 1e-9;
+
+export function largestShear(beam: Beam): Extreme {
+  const best: Extreme = { value: 0, x: 0, side: 1, combination: -1, positions: [] };
+  beam.combinations.forEach(({ shearPeak }, c) => {
+    if (Math.abs(shearPeak.value) > Math.abs(best.value) * same) {
+      best.value = shearPeak.value;
+      best.x = shearPeak.x;
+      best.combination = c;
+    }
+  });
+  const winner = beam.combinations[best.combination];
+  if (winner) Object.assign(best, shearPositions(beam, winner, best.x, best.value));
+  return best;
+}
+
+/** The side of x on which a combination has the given shear, and where its trains stand then. */
+export function shearPositions(
+  beam: Beam,
+  loads: CombinedLoads,
+  x: number,
+  value: number,
+): { side: -1 | 1; positions: Position[] } {
+  const { influence, events, system } = beam;
+  let best: { side: -1 | 1; positions: Position[] } = { side: x < beam.length ? 1 : -1, positions: [] };
+  let error = Infinity;
+  for (const side of [1, -1] as const) {
+    if ((side === 1 && x >= beam.length) || (side === -1 && x <= 0)) continue;
+    const place = placeOn(events, x, side);
+    let shear = evaluate(loads.fields.shear, place.u, 3 * place.index, 3);
+    const positions: Position[] = [];
+    if (influence) {
+      const node = system.nodes.findIndex((n) => Math.abs(n.x - x) < 1e-9 * beam.length);
+      const span = node < 0 ? system.spanAt(x) : Math.min(Math.max(side === 1 ? node : node - 1, 0), system.spans - 1);
+      // An axle may stand a hair either side of x: the line is split there.
+      const line = influence.shear(x, span);
+      for (const { train, factor } of loads.trains) {
+        const t = beam.trains[train];
+        if (!t) continue;
+        const e = trainExtremes(t, line, influence);
+        const up = factor > 0 === value > 0;
+        shear += factor * (up ? e.max : e.min);
+        positions.push({ train, x: up ? e.maxAt : e.minAt });
+      }
+    }
+    const off = Math.abs(shear - value);
+    if (off < error * (1 - 1e-9) - 1e-12 * Math.abs(value)) {
+      error = off;
+      best = { side, positions };
+    }
+  }
+  return best;
+}
+
+function placeOn(events: readonly number[], x: number, side: -1 | 1): { index: number; u: number } {
+  let index = 0;
+  while (index < events.length - 2 && (side === 1 ? (events[index + 1] ?? 0) <= x + 1e-9 : (events[index + 1] ?? 0) < x - 1e-9)) {
+    index++;
+  }
+  const a = events[index] ?? 0;
+  const b = events[index + 1] ?? 1;
+  return { index, u: Math.min(1, Math.max(0, (x - a) / (b - a))) };
+}
+
+/** Which of the two fields with one value at each x, and how to get at it. */
+interface Quantity {
+  field: 'moment' | 'bend';
+  count: number;
+  max: (v: StationValues) => Float64Array;
+  min: (v: StationValues) => Float64Array;
+  line: (x: number, span: number) => InfluenceLine | null;
+}
+
+/** The largest |M| over combinations and positions. */
+export function largestMoment(beam: Beam, stations: readonly Station[], values: readonly StationValues[]): Extreme {
+  return largest(beam, stations, values, {
+    field: 'moment',
+    count: 4,
+    max: (v) => v.momentMax,
+    min: (v) => v.momentMin,
+    line: (x, span) => beam.influence?.moment(x, span) ?? null,
+  });
+}
+
+/** The largest |w| over combinations and positions. */
+export function largestDeflection(beam: Beam, stations: readonly Station[], values: readonly StationValues[]): Extreme {
+  const found = largest(beam, stations, values, {
+    field: 'bend',
+    count: 6,
+    max: (v) => v.bendMax,
+    min: (v) => v.bendMin,
+    line: (x, span) => beam.influence?.bend(x, span) ?? null,
+  });
+  return { ...found, value: found.value / beam.EI };
+}
+
+function largest(beam: Beam, stations: readonly Station[], values: readonly StationValues[], q: Quantity): Extreme {
+  const best: Extreme = { value: 0, x: 0, side: 1, combination: -1, positions: [] };
+  // What the stations already show bounds the search below.
+  const floor = values.reduce((most, v) => Math.max(most, peak(q.max(v)), -trough(q.min(v))), 0);
+  beam.combinations.forEach((loads, c) => {
+    const v = values[c];
+    if (!v) return;
+    const found =
+      loads.trains.length === 0
+        ? largestStill(beam, loads, q, Math.max(floor * (1 - 1e-9), Math.abs(best.value)))
+        : largestMoving(beam, stations, loads, v, q, Math.max(floor * (1 - 1e-9), Math.abs(best.value)));
+    if (found && Math.abs(found.value) > Math.abs(best.value) * same) Object.assign(best, found, { combination: c });
+  });
+  return best;
+}
+
+const peak = (a: Float64Array): number => a.reduce((most, x) => Math.max(most, x), -Infinity);
+const trough = (a: Float64Array): number => a.reduce((least, x) => Math.min(least, x), Infinity);
+
+function largestStill(beam: Beam, loads: CombinedLoads, q: Quantity, floor: number): Omit<Extreme, 'combination'> | null {
+  const { events } = beam;
+  const coefficients = loads.fields[q.field];
+  let best: Omit<Extreme, 'combination'> | null = null;
+  let size = floor;
+  const c: number[] = new Array<number>(q.count).fill(0);
+  for (let i = 0; i + 1 < events.length; i++) {
+    for (const sign of [1, -1] as const) {
+      for (let d = 0; d < q.count; d++) c[d] = sign * (coefficients[q.count * i + d] ?? 0);
+      if (upperBound(c, 0, q.count) <= size) continue;
+      const top = maximum(c);
+      if (top.value > size && (best === null || top.value > Math.abs(best.value) * same)) {
+        const a = events[i] ?? 0;
+        const x = a + top.u * ((events[i + 1] ?? 0) - a);
+        best = { value: sign * top.value, x, side: top.u === 1 ? -1 : 1, positions: [] };
+        size = top.value;
+      }
+    }
+  }
+  return best;
+}
+
+function largestMoving(
+  beam: Beam,
+  stations: readonly Station[],
+  loads: CombinedLoads,
+  values: StationValues,
+  q: Quantity,
+  floor: number,
+): Omit<Extreme, 'combination'> | null {
+  let best: Omit<Extreme, 'combination'> | null = null;
+  let size = floor;
+  for (const sign of [1, -1] as const) {
+    const at = sign === 1 ? q.max(values) : q.min(values);
+    const evaluateAt = (x: number, near: Station): number => effect(beam, loads, q, x, near, sign).value * sign;
+    const note = (x: number, side: -1 | 1, value: number, near: Station): void => {
+      if (!(value > size) || (best !== null && value <= Math.abs(best.value) * same)) return;
+      size = value;
+      best = { value: sign * value, x, side, positions: effect(beam, loads, q, x, near, sign).positions };
+    };
+    stations.forEach((s, i) => note(s.x, s.side, sign * (at[i] ?? 0), s));
+    for (let i = 0; i + 1 < stations.length; i++) {
+      const a = stations[i];
+      const b = stations[i + 1];
+      if (!a || !b || b.x <= a.x) continue;
+      const fa = sign * (at[i] ?? 0);
+      const fb = sign * (at[i + 1] ?? 0);
+      // No value in between can be more than the ends and the steepest slope allow.
+      const slope =
+        q.field === 'moment'
+          ? Math.max(...[i, i + 1].flatMap((k) => [Math.abs(values.shearMax[k] ?? 0), Math.abs(values.shearMin[k] ?? 0)]))
+          : Math.max(Math.abs(fb - fa), ...neighbours(at, i)) / (b.x - a.x);
+      if ((fa + fb) / 2 + (slope * (b.x - a.x)) / 2 <= size) continue;
+      const near: Station = { ...a, side: 1 };
+      const found = goldenMaximum((x) => evaluateAt(x, near), a.x, b.x);
+      note(found.x, 1, found.value, near);
+    }
+  }
+  return best;
+}
+
+function neighbours(at: Float64Array, i: number): number[] {
+  const rise = (k: number): number => Math.abs((at[k + 1] ?? at[k] ?? 0) - (at[k] ?? 0));
+  return [rise(Math.max(0, i - 1)), rise(i), i + 2 < at.length ? rise(i + 1) : 0];
+}
+
+/** The largest effect at one x within the segment and span of a station, and the positions that bring it. */
+function effect(
+  beam: Beam,
+  loads: CombinedLoads,
+  q: Quantity,
+  x: number,
+  near: Station,
+  sign: 1 | -1,
+): { value: number; positions: Position[] } {
+  const { events, influence } = beam;
+  const a = events[near.segment] ?? 0;
+  const u = Math.min(1, Math.max(0, (x - a) / ((events[near.segment + 1] ?? 0) - a)));
+  let value = evaluate(loads.fields[q.field], u, q.count * near.segment, q.count);
+  const positions: Position[] = [];
+  const line = q.line(x, near.span);
+  if (line && influence) {
+    for (const { train, factor } of loads.trains) {
+      const t = beam.trains[train];
+      if (!t) continue;
+      const e = trainExtremes(t, line, influence);
+      const up = factor * sign > 0;
+      value += factor * (up ? e.max : e.min);
+      positions.push({ train, x: up ? e.maxAt : e.minAt });
+    }
+  }
+  return { value, positions };
+}
+
+/**
+ * The largest value between a and b: four parts first, as peaks under different axles may lie side by side,
+ * then golden-section search (Kiefer 1953) about the best.
+ */
+function goldenMaximum(f: (x: number) => number, a: number, b: number): { x: number; value: number } {
+  const h = (b - a) / 4;
+  let bestAt = 1;
+  let best = -Infinity;
+  for (let i = 1; i < 4; i++) {
+    const value = f(a + i * h);
+    if (value > best) {
+      best = value;
+      bestAt = i;
+    }
+  }
+  const ratio = (Math.sqrt(5) - 1) / 2;
+  let low = a + (bestAt - 1) * h;
+  let high = a + (bestAt + 1) * h;
+  let x1 = high - ratio * (high - low);
+  let x2 = low + ratio * (high - low);
+  let f1 = f(x1);
+  let f2 = f(x2);
+  for (let i = 0; i < 40; i++) {
+    if (f1 >= f2) {
+      high = x2;
+      x2 = x1;
+      f2 = f1;
+      x1 = high - ratio * (high - low);
+      f1 = f(x1);
+    } else {
+      low = x1;
+      x1 = x2;
+      f1 = f2;
+      x2 = low + ratio * (high - low);
+      f2 = f(x2);
+    }
+  }
+  return f1 >= f2 ? { x: x1, value: f1 } : { x: x2, value: f2 };
+}

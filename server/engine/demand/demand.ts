@@ -1,0 +1,348 @@
+import type { Beam, CombinedLoads } from '../beam/combinations';
+import { shearPositions, type Position } from '../beam/extremes';
+import type { Station } from '../beam/stations';
+import { trainExtremes, type TrainExtremes } from '../beam/train';
+import { raiseCells, valueAt, weightedSum, type Piecewise } from '../numeric/piecewise';
+import { reachAt, reachOver } from './train-reach';
+import { addReach, farthest, type Reach } from './reach';
+import { peakOfResultant, raiseResultantCells } from './still-resultant';
+
+/** The flow an interface has to carry at its worst place under one combination. */
+export interface FlowPeak {
+  /** resultant flow, N/mm */
+  value: number;
+  x: number;
+  /** shear there, N, signed; its flow along the beam and the flow passed sideways, N/mm */
+  shear: number;
+  along: number;
+  across: number;
+  positions: Position[];
+}
+
+/** What the interfaces of a member share: cells, stretches and trains are looked at once for all of them. */
+export class SharedDemand {
+  private readonly cellCache = new Map<string, Float64Array[]>();
+  private readonly stretchCache = new Map<string, TrainExtremes[]>();
+  private readonly reachCache = new Map<string, Reach[]>();
+  private readonly integrals: Float64Array[];
+
+  constructor(
+    readonly beam: Beam,
+    readonly depth: number,
+    readonly stations: readonly Station[],
+    readonly stationShear: readonly { max: Float64Array; min: Float64Array }[],
+  ) {
+    this.integrals = beam.combinations.map(({ fields }) => cumulated(beam.events, fields.shear));
+  }
+
+  /** The largest |V| of each combination within each cell of a grid. */
+  cellShear(grid: readonly number[]): Float64Array[] {
+    const key = grid.join(' ');
+    const known = this.cellCache.get(key);
+    if (known) return known;
+    const cells = this.beam.combinations.map(({ shearMax, shearMin }) => {
+      const largest = new Float64Array(grid.length - 1);
+      raiseCells(shearMax, grid, 1, largest);
+      raiseCells(shearMin, grid, -1, largest);
+      return largest;
+    });
+    this.cellCache.set(key, cells);
+    return cells;
+  }
+
+  /** ∫V dx from a to b of a combination's loads that stand still. */
+  stillIntegral(c: number, a: number, b: number): number {
+    return this.upTo(c, b) - this.upTo(c, a);
+  }
+
+  private upTo(c: number, x: number): number {
+    const { events, combinations } = this.beam;
+    const sums = this.integrals[c];
+    const shear = combinations[c]?.fields.shear;
+    if (!sums || !shear) return 0;
+    let low = 0;
+    let high = events.length - 2;
+    while (low < high) {
+      const middle = (low + high + 1) >> 1;
+      if ((events[middle] ?? 0) <= x) low = middle;
+      else high = middle - 1;
+    }
+    const h = (events[low + 1] ?? 0) - (events[low] ?? 0);
+    const u = (x - (events[low] ?? 0)) / h;
+    const k = 3 * low;
+    return (
+      (sums[low] ?? 0) +
+      h * u * ((shear[k] ?? 0) + u * ((shear[k + 1] ?? 0) / 2 + (u * (shear[k + 2] ?? 0)) / 3))
+    );
+  }
+
+  /** Largest and smallest ∫V dx over a stretch that each train can bring. */
+  trainIntegrals(a: number, b: number): TrainExtremes[] {
+    const { influence, trains } = this.beam;
+    if (!influence) return [];
+    const key = `${a} ${b}`;
+    const known = this.stretchCache.get(key);
+    if (known) return known;
+    const line = influence.shearIntegral(a, b);
+    const found = trains.map((t) => trainExtremes(t, line, influence));
+    this.stretchCache.set(key, found);
+    return found;
+  }
+
+  /** Pairs of shear and load per length at x that a train can bring. */
+  reach(train: number, x: number, side: -1 | 1): Reach[] {
+    const { influence, system } = this.beam;
+    if (!influence) return [];
+    return this.cachedReach(`${train} ${x} ${side}`, () => {
+      const node = system.nodes.findIndex((n) => n.x === x);
+      const span = node < 0 ? system.spanAt(x) : Math.min(Math.max(side === 1 ? node : node - 1, 0), system.spans - 1);
+      return reachAt(this.beam, train, x, influence.shear(x, span), this.depth);
+    });
+  }
+
+  /** The same for a stretch. */
+  stretchReach(train: number, a: number, b: number): Reach[] {
+    const { influence } = this.beam;
+    if (!influence) return [];
+    return this.cachedReach(`${train} ${a} ${b} stretch`, () =>
+      reachOver(this.beam, train, a, b, influence.shearIntegral(a, b), this.depth),
+    );
+  }
+
+  private cachedReach(key: string, make: () => Reach[]): Reach[] {
+    const known = this.reachCache.get(key);
+    if (known) return known;
+    const made = make();
+    this.reachCache.set(key, made);
+    return made;
+  }
+}
+
+function cumulated(events: readonly number[], shear: Float64Array): Float64Array {
+  const sums = new Float64Array(events.length);
+  for (let i = 0; i + 1 < events.length; i++) {
+    const h = (events[i + 1] ?? 0) - (events[i] ?? 0);
+    const k = 3 * i;
+    sums[i + 1] = (sums[i] ?? 0) + h * ((shear[k] ?? 0) + (shear[k + 1] ?? 0) / 2 + (shear[k + 2] ?? 0) / 3);
+  }
+  return sums;
+}
+
+/** What one interface has to carry, combination by combination. */
+export class InterfaceDemand {
+  /** load passed sideways that stands still, N/mm, for each combination; null where there is none */
+  private readonly still: (Piecewise | null)[];
+
+  /**
+   * @param flowPerShear |q/V|, 1/mm
+   * @param stillAcross for each load case the flow it passes sideways here, or null
+   * @param trainAcross for each train the part of its load that crosses here, signed
+   */
+  constructor(
+    readonly shared: SharedDemand,
+    readonly flowPerShear: number,
+    stillAcross: readonly (Piecewise | null)[],
+    readonly trainAcross: readonly number[],
+  ) {
+    this.still = shared.beam.combinations.map(({ factors }) => {
+      const parts = stillAcross.flatMap((f, c) => {
+        const weight = factors[c] ?? 0;
+        return f && weight !== 0 ? [{ f, weight }] : [];
+      });
+      return parts.length > 0 ? weightedSum(parts) : null;
+    });
+  }
+
+  private movesSideways(loads: CombinedLoads): boolean {
+    return loads.trains.some(({ train }) => (this.trainAcross[train] ?? 0) !== 0);
+  }
+
+  /** True where some load is passed sideways through this interface. */
+  get isCrossed(): boolean {
+    return this.shared.beam.combinations.some((loads, c) => this.still[c] !== null || this.movesSideways(loads));
+  }
+
+  /** The worst place under each combination. */
+  peaks(): FlowPeak[] {
+    const { beam } = this.shared;
+    return beam.combinations.map((loads, c): FlowPeak => {
+      const still = this.still[c] ?? null;
+      if (this.movesSideways(loads)) return this.movingPeak(loads, c);
+      if (still) {
+        const peak = peakOfResultant(loads, still, this.flowPerShear);
+        return { ...peak, positions: shearPositions(beam, loads, peak.x, peak.shear).positions };
+      }
+      const { value, x } = loads.shearPeak;
+      const along = Math.abs(value) * this.flowPerShear;
+      return { value: along, x, shear: value, along, across: 0, positions: [] };
+    });
+  }
+
+  /** The largest flow of each combination within each cell of a grid, N/mm. */
+  cells(grid: readonly number[]): Float64Array[] {
+    const shear = this.shared.cellShear(grid);
+    return this.shared.beam.combinations.map((loads, c) => {
+      const still = this.still[c] ?? null;
+      if (this.movesSideways(loads)) return this.movingCells(loads, c, grid);
+      if (still) return raiseResultantCells(loads, still, this.flowPerShear, grid);
+      return (shear[c] ?? new Float64Array(0)).map((v) => v * this.flowPerShear);
+    });
+  }
+
+  /** The flow at each station under one combination, N/mm. */
+  atStations(c: number): Float64Array {
+    const { beam, stations, stationShear } = this.shared;
+    const loads = beam.combinations[c];
+    const shear = stationShear[c];
+    if (!loads || !shear) return new Float64Array(stations.length);
+    const still = this.still[c] ?? null;
+    if (this.movesSideways(loads)) {
+      return Float64Array.from(stations, (s) => this.movingAt(loads, c, s.x, s.side).value);
+    }
+    return Float64Array.from(stations, (s, i) => {
+      const v = Math.max(Math.abs(shear.max[i] ?? 0), Math.abs(shear.min[i] ?? 0)) * this.flowPerShear;
+      return still ? Math.hypot(v, valueAt(still, s.x, s.side)) : v;
+    });
+  }
+
+  /**
+   * The force that a stretch collects under one combination, N: √((∫q)² + (∫t)²), signed inside, the largest
+   * over the positions of what moves.
+   */
+  stretchForce(c: number, a: number, b: number): number {
+    const { shared } = this;
+    const loads = shared.beam.combinations[c];
+    if (!loads) return 0;
+    const along = shared.stillIntegral(c, a, b);
+    const still = this.still[c] ?? null;
+    const across = still ? integralOver(still, a, b) : 0;
+    if (this.movesSideways(loads)) {
+      let points: Reach[] = [{ along, across, positions: [] }];
+      for (const { train, factor } of loads.trains) {
+        points = addReach(points, shared.stretchReach(train, a, b), factor, factor * (this.trainAcross[train] ?? 0));
+      }
+      return farthest(points, this.flowPerShear).value;
+    }
+    let max = along;
+    let min = along;
+    if (loads.trains.length > 0) {
+      const trains = shared.trainIntegrals(a, b);
+      for (const { train, factor } of loads.trains) {
+        const e = trains[train];
+        if (!e) continue;
+        max += factor * (factor > 0 ? e.max : e.min);
+        min += factor * (factor > 0 ? e.min : e.max);
+      }
+    }
+    const q = this.flowPerShear * Math.max(Math.abs(max), Math.abs(min));
+    return across === 0 ? q : Math.hypot(q, across);
+  }
+
+  private movingAt(loads: CombinedLoads, c: number, x: number, side: -1 | 1): { value: number; at: Reach } {
+    const { beam } = this.shared;
+    const still = this.still[c] ?? null;
+    const fixed = stillShear(beam, loads, x, side);
+    let points: Reach[] = [{ along: fixed, across: still ? valueAt(still, x, side) : 0, positions: [] }];
+    for (const { train, factor } of loads.trains) {
+      points = addReach(points, this.shared.reach(train, x, side), factor, factor * (this.trainAcross[train] ?? 0));
+    }
+    return farthest(points, this.flowPerShear);
+  }
+
+  private movingCells(loads: CombinedLoads, c: number, grid: readonly number[]): Float64Array {
+    const cells = new Float64Array(grid.length - 1);
+    const places = this.places(loads, c);
+    let next = 0;
+    for (let k = 0; k + 1 < grid.length; k++) {
+      const a = grid[k] ?? 0;
+      const b = grid[k + 1] ?? 0;
+      let largest = Math.max(this.movingAt(loads, c, a, 1).value, this.movingAt(loads, c, b, -1).value);
+      for (let i = 1; i < 4; i++) largest = Math.max(largest, this.movingAt(loads, c, a + (i * (b - a)) / 4, 1).value);
+      while (next < places.length && (places[next] ?? 0) <= a) next++;
+      for (; next < places.length && (places[next] ?? 0) < b; next++) {
+        const x = places[next] ?? 0;
+        largest = Math.max(largest, this.movingAt(loads, c, x, -1).value, this.movingAt(loads, c, x, 1).value);
+      }
+      cells[k] = largest;
+    }
+    return cells;
+  }
+
+  private movingPeak(loads: CombinedLoads, c: number): FlowPeak {
+    const { length } = this.shared.beam;
+    let best: { value: number; at: Reach; x: number } | null = null;
+    const even = Array.from({ length: 201 }, (_, i) => (i * length) / 200);
+    for (const x of [...even, ...this.places(loads, c)].sort((p, q) => p - q)) {
+      for (const side of [-1, 1] as const) {
+        if ((side === -1 && x <= 0) || (side === 1 && x >= length)) continue;
+        const found = this.movingAt(loads, c, x, side);
+        if (best === null || found.value > best.value * (1 + 1e-9)) best = { ...found, x };
+      }
+    }
+    const { value, at, x } = best ?? { value: 0, at: { along: 0, across: 0, positions: [] }, x: 0 };
+    return {
+      value,
+      x,
+      shear: at.along,
+      along: Math.abs(at.along) * this.flowPerShear,
+      across: Math.abs(at.across),
+      positions: at.positions,
+    };
+  }
+
+  /**
+   * Places at which the worst position changes its kind: where one axle stands at x while another stands at a
+   * node, at an end of the travel, or just comes within the spread of x; and events of what stands still.
+   */
+  private places(loads: CombinedLoads, c: number): number[] {
+    const { beam, depth } = this.shared;
+    const { length, events, system } = beam;
+    const found = new Set<number>(events);
+    const still = this.still[c];
+    if (still) for (let i = 0; i < still.breaks.length; i++) found.add(still.breaks[i] ?? 0);
+    for (const { train } of loads.trains) {
+      const t = beam.trains[train];
+      if (!t) continue;
+      const anchors = [...system.nodes.map((n) => n.x), depth, length - depth];
+      for (const o of t.offsets) {
+        for (const p of [t.from + o, t.to + o]) for (const d of [0, depth, -depth]) found.add(p + d);
+        for (const other of t.offsets) {
+          for (const x of anchors) for (const d of [0, depth, -depth]) found.add(x + o - other + d);
+        }
+      }
+    }
+    const sorted = [...found].filter((x) => x >= 0 && x <= length).sort((a, b) => a - b);
+    return sorted.filter((x, i) => i === 0 || x - (sorted[i - 1] ?? 0) > 1e-9 * length);
+  }
+}
+
+function stillShear(beam: Beam, loads: CombinedLoads, x: number, side: -1 | 1): number {
+  const { events } = beam;
+  let low = 0;
+  let high = events.length - 2;
+  while (low < high) {
+    const middle = (low + high + 1) >> 1;
+    const at = events[middle] ?? 0;
+    if (side === 1 ? at <= x : at < x) low = middle;
+    else high = middle - 1;
+  }
+  const a = events[low] ?? 0;
+  const u = (x - a) / ((events[low + 1] ?? 0) - a);
+  const { shear } = loads.fields;
+  return (shear[3 * low] ?? 0) + u * ((shear[3 * low + 1] ?? 0) + u * (shear[3 * low + 2] ?? 0));
+}
+
+/** ∫f dx from a to b. */
+function integralOver(f: Piecewise, a: number, b: number): number {
+  let sum = 0;
+  for (let i = 0; i + 1 < f.breaks.length; i++) {
+    const from = f.breaks[i] ?? 0;
+    const h = (f.breaks[i + 1] ?? 0) - from;
+    const u0 = Math.max(0, (a - from) / h);
+    const u1 = Math.min(1, (b - from) / h);
+    if (u1 <= u0) continue;
+    for (let d = 0; d < 4; d++) sum += (h * (f.cubic[4 * i + d] ?? 0) * (u1 ** (d + 1) - u0 ** (d + 1))) / (d + 1);
+  }
+  return sum;
+}
+
