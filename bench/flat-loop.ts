@@ -8,11 +8,13 @@ import { influenceLines, type Station } from './influence';
  * hinges, with at most one train in a combination.
  */
 
+/** Positions of a train in its combination. */
 export const POSITIONS = 400;
 const GRAVITY = 9.80665;
 
 interface Train {
   axles: number;
+  positions: number;
   /** place within its span, 0 to 1: `[position][axle]` */
   place: Float64Array;
   x: Float64Array;
@@ -123,18 +125,19 @@ function effect(
   return sum;
 }
 
-function trainOf(load: MovingLoad, starts: readonly number[]): Train {
+function trainOf(load: MovingLoad, starts: readonly number[], positions: number): Train {
   const axles = load.axles.length;
   const train: Train = {
     axles,
-    place: new Float64Array(POSITIONS * axles),
-    x: new Float64Array(POSITIONS * axles),
-    span: new Int32Array(POSITIONS * axles),
+    positions,
+    place: new Float64Array(positions * axles),
+    x: new Float64Array(positions * axles),
+    span: new Int32Array(positions * axles),
     weights: Float64Array.from(load.axles, (axle) => axle.value),
   };
   const spans = starts.length - 1;
-  for (let position = 0; position < POSITIONS; position += 1) {
-    const head = load.from + ((load.to - load.from) * position) / (POSITIONS - 1);
+  for (let position = 0; position < positions; position += 1) {
+    const head = load.from + ((load.to - load.from) * position) / (positions - 1);
     load.axles.forEach((axle, i) => {
       const at = position * axles + i;
       const x = head + axle.offset;
@@ -149,7 +152,11 @@ function trainOf(load: MovingLoad, starts: readonly number[]): Train {
 }
 
 /** Everything that the loop reads, laid out flat. Not part of what is timed. */
-export function prepare(document: MemberDocument, stationX: readonly number[]): Prepared {
+export function prepare(
+  document: MemberDocument,
+  stationX: readonly number[],
+  positions = POSITIONS,
+): Prepared {
   const spans = spansOf(document);
   const stations = stationsAt(stationX, spans);
   const influence = influenceLines(spans, stations);
@@ -177,7 +184,7 @@ export function prepare(document: MemberDocument, stationX: readonly number[]): 
   const trains = document.loadCases.map((loadCase) => {
     const moving = loadCase.loads.filter((load) => load.kind === 'moving');
     if (moving.length > 1) throw new Error('the yardstick takes one train in a case');
-    return moving[0] === undefined ? null : trainOf(moving[0], influence.starts);
+    return moving[0] === undefined ? null : trainOf(moving[0], influence.starts, positions);
   });
   return {
     stationX: Float64Array.from(stationX),
@@ -229,10 +236,10 @@ export function flatLoop(prepared: Prepared): FlatEnvelope {
       let mMax = m;
       let mMin = m;
       if (moving) {
-        const { axles, place, x, span, weights } = moving.train;
+        const { axles, positions, place, x, span, weights } = moving.train;
         const station = stationX[s] ?? 0;
         const base = s * perStation;
-        for (let position = 0, at = 0; position < POSITIONS; position += 1) {
+        for (let position = 0, at = 0; position < positions; position += 1) {
           let trainV = 0;
           let trainM = 0;
           for (let axle = 0; axle < axles; axle += 1, at += 1) {

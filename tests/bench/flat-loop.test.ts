@@ -1,7 +1,7 @@
 import { readFileSync } from 'node:fs';
 import { memberDocumentSchema } from '@shared/schemas/member';
 import { describe, expect, it } from 'vitest';
-import { flatLoop, prepare, stationsAt } from '../../bench/flat-loop';
+import { flatLoop, POSITIONS, prepare, stationsAt } from '../../bench/flat-loop';
 import { influenceLines } from '../../bench/influence';
 import { calculateMember } from '../../server/engine/calculate-member';
 
@@ -65,19 +65,21 @@ describe('the heavy member', () => {
     }
   });
 
-  it('has the same V and M by the flat loop as by the engine: at rest exactly, moving from below', () => {
+  it('has the same V and M by the flat loop as by the engine: at rest exactly, moving from just below', () => {
+    // A hundred times the positions: stepping falls short of the exact extreme by a hundredth of a step.
+    const fine = 100 * POSITIONS;
     const resting = {
       ...document,
       combinations: document.combinations.filter(({ factors }) => !factors['T1'] && !factors['T2']),
     };
     for (const [input, tolerance] of [
       [resting, 1e-9],
-      [document, 2e-3],
+      [document, 2e-4],
     ] as const) {
       const outcome = calculateMember(input);
       if (!outcome.ok) throw new Error(outcome.refusal.message);
       const { envelope } = outcome.result;
-      const flat = flatLoop(prepare(input, envelope.x));
+      const flat = flatLoop(prepare(input, envelope.x, fine));
       const last = envelope.x.length - 1;
       for (const name of ['shearMax', 'shearMin', 'momentMax', 'momentMin'] as const) {
         const scale = Math.max(...envelope[name].map(Math.abs));
