@@ -29,7 +29,7 @@ export function calculate(document: MemberDocument, found: readonly Notice[] = [
   refuseLoosePieces(document, interfaces);
 
   const beam = analyseBeam(document, section.EI);
-  const envelope = envelopeOf(beam);
+  const envelope = envelopeOf(beam, document.rules.zoneGrid);
 
   const flow = sectionFlow(section, interfaces);
   const sideways = sidewaysTransfer(section, interfaces);

@@ -11,8 +11,8 @@ export interface Envelope {
   extremes: { shear: Extreme; moment: Extreme; deflection: Extreme };
 }
 
-export function envelopeOf(beam: Beam): Envelope {
-  const stations = stationsOf(beam);
+export function envelopeOf(beam: Beam, zoneGrid: number): Envelope {
+  const stations = stationsOf(beam, zoneGrid);
   const tables = trainTables(beam, stations);
   const values = beam.combinations.map((loads) => stationValues(beam, stations, tables, loads));
   const n = stations.length;

@@ -12,16 +12,35 @@ export interface Station {
   span: number;
 }
 
-/** Every event (twice where V or M may jump) and at least a hundred even steps. */
-export function stationsOf(beam: Beam): Station[] {
+/** A zone grid that cuts the beam into more cells than this is not told cell by cell. */
+const mostGridStations = 300;
+
+/** Every event (twice where V or M may jump), a hundred even steps, and the places where a zone may end. */
+export function stationsOf(beam: Beam, zoneGrid: number): Station[] {
   const { events, length, system } = beam;
-  const steps = 100;
   const places: { x: number; event: number }[] = events.map((x, event) => ({ x, event }));
+  const even = Array.from({ length: 99 }, (_, i) => ((i + 1) * length) / 100);
+  if (length / zoneGrid <= mostGridStations) {
+    for (let i = 1; i * zoneGrid < length; i++) even.push(i * zoneGrid);
+    even.sort((a, b) => a - b);
+  }
   let next = 0;
-  for (let i = 1; i < steps; i++) {
-    const x = (i * length) / steps;
+  let last = 0;
+  for (const x of even) {
+    if (x - last <= 1e-9 * length) continue;
+    last = x;
     while (next < events.length && (events[next] ?? 0) < x - 1e-9 * length) next++;
     if (Math.abs((events[next] ?? 0) - x) > 1e-9 * length) places.push({ x, event: -1 });
+  }
+  // Where a train's travel ends, its axles reach no farther: the envelope of V may jump there.
+  const reaches = beam.trains.flatMap((t) => [...t.offsets].flatMap((o) => [t.from + o, t.to + o]));
+  const jumpsAt = new Set<number>();
+  for (const x of [...new Set(reaches)].sort((a, b) => a - b)) {
+    if (x <= 0 || x >= length) continue;
+    const near = places.find((p) => Math.abs(p.x - x) <= 1e-9 * length);
+    if (near && near.event < 0) near.x = x;
+    if (!near) places.push({ x, event: -1 });
+    jumpsAt.add(near && near.event >= 0 ? near.x : x);
   }
   places.sort((a, b) => a.x - b.x);
   const supports = new Set(system.nodes.flatMap((n, i) => (n.support ? [beam.nodeEvent[i] ?? -1] : [])));
@@ -30,13 +49,13 @@ export function stationsOf(beam: Beam): Station[] {
   const stations: Station[] = [];
   let segment = 0;
   let span = 0;
-  const last = events.length - 1;
+  const end = events.length - 1;
   for (const { x, event } of places) {
-    while (segment < last - 1 && (events[segment + 1] ?? 0) <= x) segment++;
+    while (segment < end - 1 && (events[segment + 1] ?? 0) <= x) segment++;
     while (span < system.spans - 1 && (system.nodes[span + 1]?.x ?? 0) <= x) span++;
-    if (event > 0 && event < last && jumps(event)) {
+    if (x > 0 && x < length && (jumpsAt.has(x) || (event >= 0 && jumps(event)))) {
       const leftSpan = system.nodes[span]?.x === x && span > 0 ? span - 1 : span;
-      stations.push({ x, side: -1, segment: event - 1, span: leftSpan });
+      stations.push({ x, side: -1, segment: event >= 0 ? event - 1 : segment, span: leftSpan });
     }
     stations.push({ x, side: x >= length ? -1 : 1, segment, span });
   }

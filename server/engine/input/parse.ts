@@ -3,7 +3,7 @@ import type { Issue } from '@shared/schemas/refusal';
 import type { Notice } from '@shared/schemas/result';
 import { touching } from '../beam/events';
 import { Refused } from '../refused';
-import { referenceIssues } from './references';
+import { idIssues, referenceIssues } from './references';
 import { placeIssues } from './places';
 
 /** A document that can be calculated, and what it holds that the calculation does not use. */
@@ -28,6 +28,8 @@ export function parseMember(input: unknown): Parsed {
   const document = snapPlaces(parsed.data);
   const limits = limitIssues(document);
   if (limits.length > 0) throw refusal('invalid-document', limits);
+  const ids = idIssues(document);
+  if (ids.length > 0) throw refusal('invalid-document', ids);
   const references = referenceIssues(document);
   if (references.length > 0) throw refusal('unknown-reference', references);
   const places = placeIssues(document);

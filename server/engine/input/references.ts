@@ -1,10 +1,10 @@
 import type { MemberDocument } from '@shared/schemas/member';
 import type { Issue } from '@shared/schemas/refusal';
 
-/** Ids used twice, and names of things that are not there. */
-export function referenceIssues(document: MemberDocument): Issue[] {
+/** Ids used twice. */
+export function idIssues(document: MemberDocument): Issue[] {
   const issues: Issue[] = [];
-  const unique = (list: readonly { id: string }[], path: string, what: string): Set<string> => {
+  const unique = (list: readonly { id: string }[], path: string, what: string): void => {
     const seen = new Set<string>();
     list.forEach(({ id }, i) => {
       if (seen.has(id)) {
@@ -12,13 +12,27 @@ export function referenceIssues(document: MemberDocument): Issue[] {
       }
       seen.add(id);
     });
-    return seen;
   };
   unique(document.supports, 'supports', 'supports');
-  const materials = unique(document.materials, 'materials', 'materials');
-  const pieces = unique(document.pieces, 'pieces', 'pieces');
-  const cases = unique(document.loadCases, 'loadCases', 'load cases');
+  unique(document.materials, 'materials', 'materials');
+  unique(document.pieces, 'pieces', 'pieces');
+  unique(document.loadCases, 'loadCases', 'load cases');
   unique(document.combinations, 'combinations', 'combinations');
+  document.connections.forEach((connection, i) => {
+    if (connection.pieces[0] === connection.pieces[1]) {
+      issues.push({ path: `connections.${i}.pieces`, message: 'A connection joins two different pieces.' });
+    }
+  });
+  return issues;
+}
+
+/** Names of things that are not there. */
+export function referenceIssues(document: MemberDocument): Issue[] {
+  const issues: Issue[] = [];
+  const idsOf = (list: readonly { id: string }[]): Set<string> => new Set(list.map(({ id }) => id));
+  const materials = idsOf(document.materials);
+  const pieces = idsOf(document.pieces);
+  const cases = idsOf(document.loadCases);
 
   document.pieces.forEach((piece, i) => {
     if (!materials.has(piece.material)) {
@@ -37,9 +51,6 @@ export function referenceIssues(document: MemberDocument): Issue[] {
         });
       }
     });
-    if (connection.pieces[0] === connection.pieces[1]) {
-      issues.push({ path: `connections.${i}.pieces`, message: 'A connection joins two different pieces.' });
-    }
     const headSide = connection.fastener?.headSide;
     if (headSide !== undefined && !connection.pieces.includes(headSide)) {
       issues.push({

@@ -85,7 +85,7 @@ export function peakOf(f: Piecewise, sign: 1 | -1): Peak {
     for (let d = 0; d < 4; d++) c[d] = sign * (f.cubic[4 * i + d] ?? 0);
     if (upperBound(c, 0, 4) <= best.value) continue;
     const top = maximum(c);
-    if (top.value > best.value + 1e-9 * Math.abs(best.value)) {
+    if (best.value === -Infinity || top.value > best.value + 1e-9 * Math.abs(best.value)) {
       const a = f.breaks[i] ?? 0;
       best = { value: top.value, x: a + top.u * ((f.breaks[i + 1] ?? 0) - a) };
     }

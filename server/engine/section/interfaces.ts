@@ -88,19 +88,20 @@ export function findInterfaces(document: MemberDocument): Interface[] {
       byPair.set(`${a} ${b}`, item);
     });
   });
-  const issues: Issue[] = [];
+  const apart: Issue[] = [];
+  const twice: Issue[] = [];
   connections.forEach((connection, i) => {
     const [first, second] = connection.pieces.map((id) => index.get(id) ?? -1);
     const pair = `${Math.min(first ?? -1, second ?? -1)} ${Math.max(first ?? -1, second ?? -1)}`;
     const item = byPair.get(pair);
     const names = connection.pieces.join(' and ');
     if (!item) {
-      issues.push({
+      apart.push({
         path: `connections.${i}.pieces`,
         message: `${names} do not touch along an edge, so nothing can join them: move one of them, or take the connection out.`,
       });
     } else if (item.connection) {
-      issues.push({
+      twice.push({
         path: `connections.${i}.pieces`,
         message: `${names} are joined twice: keep one connection for each interface.`,
       });
@@ -110,8 +111,9 @@ export function findInterfaces(document: MemberDocument): Interface[] {
       item.pieces = connection.pieces;
     }
   });
-  const [firstIssue] = issues;
-  if (firstIssue) throw new Refused('not-touching', firstIssue.message, issues);
+  const issues = [...apart, ...twice];
+  const [first] = issues;
+  if (first) throw new Refused(apart.length > 0 ? 'not-touching' : 'invalid-document', first.message, issues);
   return found;
 }
 
