@@ -184,7 +184,7 @@ describe('a schedule that was found', () => {
       rest: fc.constantFrom(0, 0, 30),
       rules: fc.record({
         spacingStep: fc.constantFrom(5, 10),
-        spacingMin: fc.constantFrom(5, 20, 60),
+        spacingMin: fc.constantFrom(5, 20, 60, 100),
         spacingMax: fc.constantFrom(120, 300),
         maxZones: fc.integer({ min: 1, max: 5 }),
         zoneGrid: fc.constant(200),
@@ -237,7 +237,7 @@ describe('a schedule that was found', () => {
           }
         }
       }),
-      runs(200),
+      runs(250),
     );
     // the sample must hold both kinds, or the law was not tried
     expect(found).toBeGreaterThan(50);
@@ -330,7 +330,7 @@ describe('given zones', () => {
           expect(one.zones.map(({ from, to, spacing }) => ({ from, to, spacing }))).toEqual(given);
           const worst = one.zones.map(({ from, to, spacing, utilisation }) => {
             const q = flowPerShear(result, one) * largestShear(body, member.length, from, to);
-            expectClose(utilisation, (spacing * q) / (one.rows * one.capacity), 1e-9, 'utilisation', 1e-8);
+            expectClose(utilisation, (spacing * q) / (one.rows * one.capacity), 1e-6, 'utilisation', 1e-8);
             return utilisation;
           });
           expectClose(one.utilisation, Math.max(...worst), 1e-9, 'the worst zone', 1e-9);

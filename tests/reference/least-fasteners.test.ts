@@ -36,10 +36,12 @@ const LEAST = 127.79538199;
 
 describe('the flange force of a simple span must be got in and out', () => {
   it('the fasteners’ forces add up to it whatever their spacing', () => {
+    // alike each side of midspan, so that no fastener's stretch holds flow of both directions
     const halves = [
       { from: 0, to: 1100, spacing: 37 },
       { from: 1100, to: 2400, spacing: 83 },
-      { from: 2400, to: 4800, spacing: 51 },
+      { from: 2400, to: 3700, spacing: 83 },
+      { from: 3700, to: 4800, spacing: 51 },
     ];
     for (const { fasteners } of iSection({}, halves)) {
       const sum = (fasteners?.forces ?? []).flat().reduce((total, force) => total + Math.abs(force), 0);
