@@ -1,8 +1,14 @@
 import fc from 'fast-check';
 import type { MemberInput } from '@shared/schemas/member';
 
-/** Every law runs from this seed, so that a failure can be run again. */
-export const runs = (numRuns: number): fc.Parameters<unknown> => ({ seed: 20_260_417, numRuns });
+/**
+ * Every law runs from one seed, so that a failure can be run again. LAWS_SEED and LAWS_TIMES in the environment
+ * ask for another seed, or for so many times the runs: for a night's search.
+ */
+export const runs = (numRuns: number): fc.Parameters<unknown> => ({
+  seed: Number(process.env['LAWS_SEED'] ?? 20_260_417),
+  numRuns: numRuns * Number(process.env['LAWS_TIMES'] ?? 1),
+});
 
 export type Beam = Pick<MemberInput, 'length' | 'supports'> & { hinges: number[] };
 export type Section = Pick<MemberInput, 'materials' | 'pieces'> & {

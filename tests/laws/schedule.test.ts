@@ -15,6 +15,7 @@ import {
   memberOf,
   runs,
   stack,
+  train,
   type RulesInput,
 } from './members';
 
@@ -242,6 +243,117 @@ describe('a schedule that was found', () => {
     // the sample must hold both kinds, or the law was not tried
     expect(found).toBeGreaterThan(50);
     expect(none).toBeGreaterThan(10);
+  });
+});
+
+describe('a schedule under moving loads, several combinations and load passed sideways', () => {
+  const cells = 8;
+  const busy = fc
+    .record({
+      zoneGrid: fc.constantFrom(200, 300),
+      section: fc.oneof(stack, box, ledger),
+      rules: fc.record({
+        spacingStep: fc.constantFrom(1, 5),
+        spacingMin: fc.constantFrom(5, 40),
+        spacingMax: fc.constant(250),
+        maxZones: fc.integer({ min: 2, max: 5 }),
+        minZoneLength: fc.constantFrom(0, 350, 600),
+        mirror: fc.boolean(),
+      }),
+    })
+    .chain(({ zoneGrid, section, rules }) => {
+      const length = cells * zoneGrid;
+      const beam = {
+        length,
+        supports: [
+          { id: 'A', x: 0, kind: 'pin' as const },
+          { id: 'B', x: length * 0.6, kind: 'roller' as const },
+          { id: 'C', x: length, kind: 'roller' as const },
+        ],
+        hinges: [],
+      };
+      const on = section.pieces.at(-1)?.id ?? '';
+      return fc
+        .record({ dead: fixedLoads(beam, 2), moving: train(beam), side: fc.boolean() })
+        .map(({ dead, moving, side }): MemberInput => ({
+          ...memberOf(beam, section, [], { ...rules, zoneGrid }),
+          loadCases: [
+            { id: 'G', action: 'permanent', loads: side ? dead.map((load) => ({ ...load, on })) : dead },
+            { id: 'W', action: 'construction', loads: [side ? { ...moving, on } : moving] },
+          ],
+          combinations: [
+            { id: 'C1', factors: { G: 1.35 } },
+            { id: 'C2', factors: { G: 1, W: 1.5 } },
+          ],
+        }));
+    });
+
+  it('has no better one: every schedule tried, each cell’s flow as a given zone reports it', () => {
+    fc.assert(
+      fc.property(busy, (member) => {
+        const result = calculated(member);
+        const limits = limitsOf(member.rules ?? {});
+        const zones = Array.from({ length: cells }, (_, i) => ({
+          from: i * limits.grid,
+          to: (i + 1) * limits.grid,
+          spacing: 1,
+        }));
+        const given = calculated({
+          ...member,
+          connections: (member.connections ?? []).map((connection) => ({ ...connection, zones })),
+        });
+        result.interfaces.forEach((one, i) => {
+          const cell = given.interfaces[i]?.zones ?? [];
+          const flow = (from: number, to: number): number =>
+            Math.max(
+              ...cell
+                .filter((zone) => zone.from >= from - 1e-6 && zone.to <= to + 1e-6)
+                .map(({ utilisation }) => utilisation * one.rows * one.capacity),
+            );
+          const best = byEnumeration(member.length, limits, one.rows, one.capacity, flow);
+          expect(one.zones.length).toBe(best?.zones ?? 0);
+          if (best !== null) expectClose(amount(one), best.amount, 0, 'fasteners', 1e-9);
+        });
+      }),
+      runs(80),
+    );
+  });
+
+  it('each combination alone asks for no more than both, and one of them for as much, of every fastener', () => {
+    fc.assert(
+      fc.property(busy, (member) => {
+        const zones = [
+          { from: 0, to: member.length / 2, spacing: 73 },
+          { from: member.length / 2, to: member.length, spacing: 118 },
+        ];
+        const given: MemberInput = {
+          ...member,
+          connections: (member.connections ?? []).map((connection) => ({ ...connection, zones })),
+        };
+        const both = calculated(given);
+        const alone = (member.combinations ?? []).map((combination) =>
+          calculated({ ...given, combinations: [combination] }),
+        );
+        both.interfaces.forEach((one, i) => {
+          const scale = Math.max(1e-6, ...(one.fasteners?.forces ?? []).flat());
+          one.fasteners?.forces.forEach((row, r) =>
+            row.forEach((force, f) => {
+              const most = Math.max(
+                ...alone.map(({ interfaces }) => interfaces[i]?.fasteners?.forces[r]?.[f] ?? NaN),
+              );
+              expectClose(force, most, scale, `force ${r} ${f} of ${one.id}`, 1e-9);
+            }),
+          );
+          one.zones.forEach(({ utilisation }, z) => {
+            const most = Math.max(
+              ...alone.map(({ interfaces }) => interfaces[i]?.zones[z]?.utilisation ?? NaN),
+            );
+            expectClose(utilisation, most, 1e-6, `zone ${z} of ${one.id}`, 1e-9);
+          });
+        });
+      }),
+      runs(50),
+    );
   });
 });
 

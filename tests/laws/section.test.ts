@@ -209,6 +209,47 @@ describe('shear flow', () => {
   });
 });
 
+describe('glue and lines', () => {
+  const kinds = fc.record({
+    kind: fc.constantFrom('adhesive' as const, 'continuous' as const),
+    value: fc.integer({ min: 1, max: 900 }),
+    bead: fc.option(fc.integer({ min: 20, max: 90 }), { nil: null }),
+  });
+  it('glue carries over its contact width, a line per length, runs by bead·R/q', () => {
+    fc.assert(
+      fc.property(onSimpleBeam(anySection), kinds, (member, { kind, value, bead }) => {
+        const result = calculated({
+          ...member,
+          rules: { spacingMin: 1, spacingStep: 1, spacingMax: 1000, maxZones: 4 },
+          connections: (member.connections ?? []).map(({ pieces }) => ({
+            pieces,
+            kind,
+            capacity: { basis: 'allowable', value: kind === 'adhesive' ? value / 100 : value },
+            ...(kind === 'continuous' && bead !== null ? { bead } : {}),
+          })),
+        });
+        for (const one of result.interfaces) {
+          const contact = result.section.interfaces.find(({ id }) => id === one.id)?.contact ?? NaN;
+          const q = one.peakFlow.value;
+          expect(one.fasteners).toBeNull();
+          if (kind === 'continuous' && bead !== null) {
+            if (one.requiredSpacing !== null)
+              expectClose(one.requiredSpacing, (bead * value) / q, 0, 'pitch', 1e-9);
+            for (const { spacing } of one.zones) expect(spacing).toBeGreaterThanOrEqual(1);
+            if (one.zones.some(({ spacing }) => spacing < bead)) expect(one.status).toBe('over');
+          } else {
+            const most = kind === 'adhesive' ? (value / 100) * contact : value;
+            expect(one.zones).toEqual([]);
+            expectClose(one.utilisation, q / most, 1e-9, 'utilisation', 1e-9);
+            expect(one.status).toBe(q / most > 1 ? 'over' : 'ok');
+          }
+        }
+      }),
+      runs(80),
+    );
+  });
+});
+
 describe('capacity and spacing', () => {
   it('a factor of safety divides the required spacing, two rows double it', () => {
     fc.assert(
