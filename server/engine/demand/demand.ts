@@ -210,9 +210,16 @@ export class InterfaceDemand {
    * over the positions of what moves.
    */
   stretchForce(c: number, a: number, b: number): number {
+    const { along, across } = this.stretchParts(c, a, b);
+    const q = this.flowPerShear * Math.abs(along);
+    return across === 0 ? q : Math.hypot(q, across);
+  }
+
+  /** The same in its two parts: ∫V dx, N·mm, and the load passed sideways over the stretch, N. */
+  stretchParts(c: number, a: number, b: number): { along: number; across: number } {
     const { shared } = this;
     const loads = shared.beam.combinations[c];
-    if (!loads) return 0;
+    if (!loads) return { along: 0, across: 0 };
     const along = shared.stillIntegral(c, a, b);
     const still = this.still[c] ?? null;
     const across = still ? integralOver(still, a, b) : 0;
@@ -221,7 +228,7 @@ export class InterfaceDemand {
       for (const { train, factor } of loads.trains) {
         points = addReach(points, shared.stretchReach(train, a, b), factor, factor * (this.trainAcross[train] ?? 0));
       }
-      return farthest(points, this.flowPerShear).value;
+      return farthest(points, this.flowPerShear).at;
     }
     let max = along;
     let min = along;
@@ -234,8 +241,7 @@ export class InterfaceDemand {
         min += factor * (factor > 0 ? e.min : e.max);
       }
     }
-    const q = this.flowPerShear * Math.max(Math.abs(max), Math.abs(min));
-    return across === 0 ? q : Math.hypot(q, across);
+    return { along: max >= -min ? max : min, across };
   }
 
   private movingAt(loads: CombinedLoads, c: number, x: number, side: -1 | 1): { value: number; at: Reach } {
