@@ -67,7 +67,9 @@ export function formatFigures(value: number): string {
 }
 
 const superscript = (power: number): string =>
-  [...String(power)].map((digit) => '⁰¹²³⁴⁵⁶⁷⁸⁹'.charAt(Number(digit))).join('');
+  Array.from(String(power))
+    .map((digit) => '⁰¹²³⁴⁵⁶⁷⁸⁹'.charAt(Number(digit)))
+    .join('');
 
 /** As many decimals as the number has, up to nine figures, without trailing noughts. */
 export function formatExact(value: number): string {
