@@ -13,6 +13,7 @@ import {
   train,
   type Beam,
   type LoadInput,
+  type Section,
 } from './members';
 
 type Train = Extract<LoadInput, { kind: 'moving' }>;
@@ -267,6 +268,42 @@ describe('an envelope of a moving load', () => {
         }
       }),
       runs(30),
+    );
+  });
+
+  it('jumps where one axle stands on the beam’s end and another within: past the end it carries nothing', () => {
+    const axles = [
+      { offset: 0, value: 300 },
+      { offset: -60, value: 420 },
+    ];
+    const beam: Beam = {
+      length: 1200,
+      supports: [
+        { id: 'A', x: 0, kind: 'pin' },
+        { id: 'B', x: 800, kind: 'roller' },
+      ],
+      hinges: [],
+    };
+    const section: Section = {
+      materials: [{ id: 'w', name: '', E: 9000 }],
+      pieces: [
+        { id: 'a', material: 'w', y: 0, z: 0, width: 90, depth: 40 },
+        { id: 'b', material: 'w', y: 0, z: 40, width: 90, depth: 40 },
+      ],
+      connections: [
+        {
+          pieces: ['a', 'b'],
+          kind: 'fasteners',
+          capacity: { basis: 'allowable', value: 900 },
+        },
+      ],
+    };
+    const { envelope } = calculated(
+      memberOf(beam, section, [{ kind: 'moving', from: -700, to: 1900, axles }]),
+    );
+    // just left of 1140 both axles may stand to the right of it; right of 1140 only one of them, the heavier at most
+    expect(stationsAt(envelope.x, envelope.shearMax, 1140)).toEqual(
+      [720, 420].map((force): unknown => expect.closeTo(force, 6)),
     );
   });
 });

@@ -80,7 +80,8 @@ const sideLoaded = determinateBeam.chain((beam) =>
   ),
 );
 
-/** Places to look at: evenly through the beam, and just beside every place where a load or its spread begins or ends. */
+/** Places to look at: evenly through the beam, and just beside every support and every
+ * place where a load or its spread begins or ends. */
 function places(member: MemberInput): number[] {
   const depth = Math.max(...member.pieces.map((piece) => piece.z + piece.depth));
   const telling = (member.loadCases[0]?.loads ?? []).flatMap((load) => {
@@ -88,9 +89,11 @@ function places(member: MemberInput): number[] {
     return load.kind === 'uniform' || load.kind === 'varying' ? [load.from, load.to] : [];
   });
   const even = Array.from({ length: 2000 }, (_, s) => (member.length * (s + 0.5)) / 2000);
-  return [...even, ...[0, member.length, ...telling].flatMap((x) => [x - 1e-6, x + 1e-6])].filter(
-    (x) => x > 0 && x < member.length,
-  );
+  const supports = member.supports.map(({ x }) => x);
+  return [
+    ...even,
+    ...[0, member.length, ...supports, ...telling].flatMap((x) => [x - 1e-6, x + 1e-6]),
+  ].filter((x) => x > 0 && x < member.length);
 }
 
 /** Vertical force per length that crosses from ply i to ply i+1: what enters on the left less what the left keeps. */
