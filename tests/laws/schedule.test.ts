@@ -1,9 +1,9 @@
 import fc from 'fast-check';
 import { describe, expect, it } from 'vitest';
 import type { MemberInput } from '@shared/schemas/member';
-import type { InterfaceResult } from '@shared/schemas/result';
 import { amount, calculated, expectClose } from './calculated';
-import { bodyOf, flowPerShear, largestShear, shearArea } from './demand';
+import { bodyOf, flowPerShear, largestShear } from './demand';
+import { boundaries, byEnumeration, limitsOf } from './enumeration';
 import {
   anyRules,
   anyBeam,
@@ -16,27 +16,7 @@ import {
   runs,
   stack,
   train,
-  type RulesInput,
 } from './members';
-
-interface Limits {
-  step: number;
-  min: number;
-  max: number;
-  zones: number;
-  grid: number;
-  shortest: number;
-  mirror: boolean;
-}
-const limitsOf = (rules: RulesInput): Limits => ({
-  step: rules.spacingStep ?? 5,
-  min: rules.spacingMin ?? 40,
-  max: rules.spacingMax ?? 300,
-  zones: rules.maxZones ?? 3,
-  grid: rules.zoneGrid ?? 100,
-  shortest: rules.minZoneLength ?? 300,
-  mirror: rules.mirror ?? false,
-});
 
 const isMultiple = (value: number, of: number): boolean =>
   Math.abs(value / of - Math.round(value / of)) < 1e-9;
@@ -46,74 +26,6 @@ const scheduled = anyBeam.chain((beam) =>
     .record({ section: anySection, loads: fixedLoads(beam), rules: anyRules })
     .map(({ section, loads, rules }) => memberOf(beam, section, loads, rules)),
 );
-
-/** Places where a zone may end: multiples of the grid from the left end (both ends, mirrored), and the beam's ends. */
-function boundaries(length: number, { grid, mirror }: Limits): number[] {
-  const reach = mirror ? length / 2 : length;
-  const left: number[] = [];
-  for (let i = 0; i * grid <= reach + 1e-9; i += 1) left.push(i * grid);
-  const all = mirror ? [...left, ...left.map((x) => length - x)] : [...left, length];
-  return [...new Set(all.map((x) => Math.round(x * 1e6) / 1e6))]
-    .filter((x) => x <= length)
-    .sort((a, b) => a - b);
-}
-
-/** Every schedule there is, the cheapest returned: fasteners (Σ rows·length/spacing), then zones. */
-function byEnumeration(
-  length: number,
-  limits: Limits,
-  rows: number,
-  R: number,
-  flow: (from: number, to: number) => number,
-): { amount: number; zones: number } | null {
-  const places = boundaries(length, limits);
-  const spacingOf = (from: number, to: number): number => {
-    const q = flow(from, to);
-    const allowed = Math.min(limits.max, q > 1e-9 ? (rows * R) / q : Infinity);
-    const spacing = Math.floor(allowed / limits.step + 1e-9) * limits.step;
-    return spacing >= limits.min - 1e-9 && spacing > 0 ? spacing : NaN;
-  };
-  let best: { amount: number; zones: number } | null = null;
-  const visit = (cuts: number[]): void => {
-    const from = cuts.at(-1) ?? 0;
-    if (from === length) {
-      const pairs = cuts.slice(1).map((to, i): [number, number] => [cuts[i] ?? NaN, to]);
-      const reads = pairs.map(([a, b]) => ({ length: b - a, spacing: spacingOf(a, b) }));
-      if (limits.mirror) {
-        const n = pairs.length;
-        const same = pairs.every(([a, b], i) => {
-          const [c = NaN, d = NaN] = pairs[n - 1 - i] ?? [];
-          return Math.abs(a - (length - d)) < 1e-6 && Math.abs(b - (length - c)) < 1e-6;
-        });
-        if (!same) return;
-        // both ends read the same: the closer spacing of the two
-        for (let i = 0; i < n / 2; i += 1) {
-          const one = reads[i];
-          const other = reads[n - 1 - i];
-          if (one !== undefined && other !== undefined) {
-            one.spacing = other.spacing = Math.min(one.spacing, other.spacing);
-          }
-        }
-      }
-      if (reads.some(({ spacing }) => Number.isNaN(spacing))) return;
-      const total = reads.reduce((sum, zone) => sum + (rows * zone.length) / zone.spacing, 0);
-      const better =
-        best === null ||
-        total < best.amount * (1 - 1e-12) ||
-        (total <= best.amount * (1 + 1e-12) && pairs.length < best.zones);
-      if (better) best = { amount: total, zones: pairs.length };
-      return;
-    }
-    if (cuts.length > limits.zones) return;
-    for (const to of places) {
-      // the shortest zone: a beam shorter than it is one zone
-      if (to > from && (to - from >= limits.shortest - 1e-9 || (from === 0 && to === length)))
-        visit([...cuts, to]);
-    }
-  };
-  visit([0]);
-  return best;
-}
 
 describe('a schedule that was found', () => {
   it('covers the beam, keeps to the step, the limits, the grid, the shortest zone and the number of zones', () => {
@@ -353,103 +265,6 @@ describe('a schedule under moving loads, several combinations and load passed si
         });
       }),
       runs(50),
-    );
-  });
-});
-
-/** Positions of a row of fasteners from the zones: evenly divided, half the real spacing from a zone's ends. */
-const positionsOf = (zones: readonly { from: number; to: number; perRow: number }[]): number[] =>
-  zones.flatMap(({ from, to, perRow }) =>
-    Array.from({ length: perRow }, (_, i) => from + ((to - from) * (i + 0.5)) / perRow),
-  );
-
-describe('every fastener', () => {
-  it('stands evenly divided in its zone and takes the flow of its stretch; together they take all of it', () => {
-    fc.assert(
-      fc.property(scheduled, (member) => {
-        const result = calculated(member);
-        const body = bodyOf(member, result);
-        for (const one of result.interfaces) {
-          if (one.fasteners === null || one.zones.length === 0) continue;
-          const expected = positionsOf(one.zones);
-          const { positions, forces } = one.fasteners;
-          expect(positions).toHaveLength(one.rows);
-          expect(forces).toHaveLength(one.rows);
-          const each = flowPerShear(result, one);
-          const scale =
-            (each * largestShear(body, member.length, 0, member.length) * member.length) / one.rows;
-          positions.forEach((row, r) => {
-            expect(row).toHaveLength(expected.length);
-            let carried = 0;
-            row.forEach((x, i) => {
-              expectClose(x, expected[i] ?? NaN, member.length, 'position', 1e-12);
-              const from = i === 0 ? 0 : (x + (row[i - 1] ?? NaN)) / 2;
-              const to = i + 1 === row.length ? member.length : (x + (row[i + 1] ?? NaN)) / 2;
-              const signed = (each * shearArea(body, member.length, from, to)) / one.rows;
-              expectClose(forces[r]?.[i] ?? NaN, Math.abs(signed), scale, `force at ${x}`, 1e-9);
-              carried += Math.sign(signed) * (forces[r]?.[i] ?? NaN);
-            });
-            const all = (each * shearArea(body, member.length, 0, member.length)) / one.rows;
-            expectClose(carried, all, scale, 'the row’s sum', 1e-8);
-          });
-          const worst = Math.max(...forces.flat()) / one.capacity;
-          expectClose(one.fasteners.utilisation, worst, 1e-9, 'utilisation', 1e-9);
-          const status =
-            worst > 1 + 1e-9 && one.utilisation <= 1 + 1e-9
-              ? 'advice'
-              : one.utilisation > 1 + 1e-9
-                ? 'over'
-                : 'ok';
-          expect(one.status).toBe(status);
-        }
-      }),
-      runs(120),
-    );
-  });
-});
-
-describe('given zones', () => {
-  const pinned = anyBeam.chain((beam) =>
-    fc
-      .record({
-        section: stack,
-        loads: fixedLoads(beam),
-        cuts: fc.uniqueArray(fc.integer({ min: 1, max: 9 }), { maxLength: 4 }),
-        spacings: fc.array(fc.integer({ min: 15, max: 400 }), { minLength: 5, maxLength: 5 }),
-      })
-      .map(({ section, loads, cuts, spacings }): MemberInput => {
-        const ends = [0, ...cuts.sort((a, b) => a - b).map((i) => (beam.length * i) / 10), beam.length];
-        const zones = ends.slice(1).map((to, i) => ({ from: ends[i] ?? 0, to, spacing: spacings[i] ?? 100 }));
-        return memberOf(
-          beam,
-          {
-            ...section,
-            connections: section.connections.map((one) => ({ ...one, zones: [...zones].reverse() })),
-          },
-          loads,
-        );
-      }),
-  );
-
-  it('stand as they are, from left to right, with their own utilisation; too much is over, never refused', () => {
-    fc.assert(
-      fc.property(pinned, (member) => {
-        const result = calculated(member);
-        const body = bodyOf(member, result);
-        const given = [...(member.connections?.[0]?.zones ?? [])].sort((a, b) => a.from - b.from);
-        result.interfaces.forEach((one: InterfaceResult) => {
-          expect(one.pinned).toBe(true);
-          expect(one.zones.map(({ from, to, spacing }) => ({ from, to, spacing }))).toEqual(given);
-          const worst = one.zones.map(({ from, to, spacing, utilisation }) => {
-            const q = flowPerShear(result, one) * largestShear(body, member.length, from, to);
-            expectClose(utilisation, (spacing * q) / (one.rows * one.capacity), 1e-6, 'utilisation', 1e-8);
-            return utilisation;
-          });
-          expectClose(one.utilisation, Math.max(...worst), 1e-9, 'the worst zone', 1e-9);
-          expect(one.status === 'over').toBe(one.utilisation > 1 + 1e-9);
-        });
-      }),
-      runs(80),
     );
   });
 });
