@@ -87,3 +87,42 @@ export function byEnumeration(
   visit([0]);
   return best;
 }
+
+/**
+ * The same for members too large to try every schedule one by one: the cheapest way to cover the rest of the beam
+ * from each place with so many zones left, each worked out once. Not for `mirror`.
+ */
+export function byRecursion(
+  length: number,
+  limits: Limits,
+  rows: number,
+  R: number,
+  flow: (from: number, to: number) => number,
+): { amount: number; zones: number } | null {
+  const places = boundaries(length, limits);
+  const cells = places.slice(1).map((to, i) => flow(places[i] ?? NaN, to));
+  const known = new Map<string, number>();
+  const rest = (at: number, left: number): number => {
+    if (at === cells.length) return 0;
+    if (left === 0) return Infinity;
+    const key = `${at} ${left}`;
+    const before = known.get(key);
+    if (before !== undefined) return before;
+    let least = Infinity;
+    let q = 0;
+    for (let to = at + 1; to <= cells.length; to += 1) {
+      q = Math.max(q, cells[to - 1] ?? NaN);
+      const own = (places[to] ?? NaN) - (places[at] ?? NaN);
+      if (own < limits.shortest - 1e-9 && !(at === 0 && to === cells.length)) continue;
+      const spacing = Math.floor(Math.min(limits.max, (rows * R) / q) / limits.step + 1e-9) * limits.step;
+      if (spacing < limits.min - 1e-9 || spacing <= 0) break;
+      least = Math.min(least, (rows * own) / spacing + rest(to, left - 1));
+    }
+    known.set(key, least);
+    return least;
+  };
+  const all = Array.from({ length: limits.zones }, (_, i) => rest(0, i + 1));
+  const amount = Math.min(...all);
+  if (amount === Infinity) return null;
+  return { amount, zones: all.findIndex((one) => one <= amount * (1 + 1e-12)) + 1 };
+}

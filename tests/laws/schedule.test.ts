@@ -3,7 +3,7 @@ import { describe, expect, it } from 'vitest';
 import type { MemberInput } from '@shared/schemas/member';
 import { amount, calculated, expectClose } from './calculated';
 import { bodyOf, flowPerShear, largestShear } from './demand';
-import { boundaries, byEnumeration, limitsOf } from './enumeration';
+import { boundaries, byEnumeration, byRecursion, limitsOf } from './enumeration';
 import {
   anyRules,
   anyBeam,
@@ -96,7 +96,7 @@ describe('a schedule that was found', () => {
       cells: fc.integer({ min: 3, max: 9 }),
       rest: fc.constantFrom(0, 0, 30),
       rules: fc.record({
-        spacingStep: fc.constantFrom(5, 10),
+        spacingStep: fc.constantFrom(0.25, 1, 5, 10),
         spacingMin: fc.constantFrom(5, 20, 60, 100),
         spacingMax: fc.constantFrom(120, 300),
         maxZones: fc.integer({ min: 1, max: 5 }),
@@ -155,6 +155,47 @@ describe('a schedule that was found', () => {
     // the sample must hold both kinds, or the law was not tried
     expect(found).toBeGreaterThan(50);
     expect(none).toBeGreaterThan(10);
+  });
+});
+
+describe('a long schedule', () => {
+  const long = anyBeam.chain((beam) =>
+    fc
+      .record({
+        section: anySection,
+        loads: fixedLoads(beam),
+        rules: fc.record({
+          spacingStep: fc.constantFrom(0.25, 1, 5),
+          spacingMin: fc.constant(0.25),
+          spacingMax: fc.constantFrom(180, 420),
+          maxZones: fc.integer({ min: 2, max: 12 }),
+          zoneGrid: fc.constantFrom(60, 75),
+          minZoneLength: fc.constantFrom(0, 100, 290),
+        }),
+      })
+      .map(({ section, loads, rules }) => memberOf(beam, section, loads, rules)),
+  );
+
+  it('of many cells and up to twelve zones has no better one either', () => {
+    fc.assert(
+      fc.property(long, (member) => {
+        const result = calculated(member);
+        const body = bodyOf(member, result);
+        for (const one of result.interfaces) {
+          const each = flowPerShear(result, one);
+          const best = byRecursion(
+            member.length,
+            limitsOf(member.rules ?? {}),
+            one.rows,
+            one.capacity,
+            (from, to) => each * largestShear(body, member.length, from, to),
+          );
+          expect(one.zones.length).toBe(best?.zones ?? 0);
+          if (best !== null) expectClose(amount(one), best.amount, 0, 'fasteners', 1e-9);
+        }
+      }),
+      runs(60),
+    );
   });
 });
 
