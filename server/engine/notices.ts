@@ -34,9 +34,11 @@ function sectionNotices(document: MemberDocument, section: Section, sideways: Si
   }
   if (sideways.stacks > 1) {
     const lowest = section.bottom;
-    const raised = document.pieces.filter((p, i) => {
-      const stack = sideways.stackOf[i];
-      return document.pieces.every((q, k) => sideways.stackOf[k] !== stack || q.z > lowest + 1e-6) && p.z > lowest + 1e-6;
+    // Flanges between webs carry next to nothing by themselves; a ply does.
+    const raised = document.pieces.filter((_, i) => {
+      const stack = sideways.stackOf[i] ?? 0;
+      if ((sideways.shares[stack] ?? 0) < 0.05) return false;
+      return document.pieces.every((q, k) => sideways.stackOf[k] !== stack || q.z > lowest + 1e-6);
     });
     if (raised.length > 0) {
       notices.push({
@@ -97,9 +99,10 @@ function slipNotices(document: MemberDocument, flow: SectionFlow, beam: Beam): N
 
 function loadNotices(document: MemberDocument, sideways: Sideways): Notice[] {
   const notices: Notice[] = [];
+  const trains = document.loadCases.flatMap((c) => c.loads.flatMap((l) => (l.kind === 'moving' ? [l] : [])));
   document.loadCases.forEach((loadCase) => {
-    const trains = loadCase.loads.flatMap((l) => (l.kind === 'moving' ? [l] : []));
-    trains.forEach((train) => {
+    loadCase.loads.forEach((train) => {
+      if (train.kind !== 'moving') return;
       const order = [...train.axles].sort((a, b) => a.offset - b.offset);
       const signature = (axles: readonly { offset: number; value: number }[]): string => {
         const start = axles[0]?.offset ?? 0;
@@ -154,7 +157,7 @@ function connectionNotices(section: Section, interfaces: readonly Interface[]): 
     const length = connection.fastener?.length;
     const first = section.pieces[a]?.piece;
     const second = section.pieces[b]?.piece;
-    if (connection.kind === 'fasteners' && length !== undefined && first && second) {
+    if (connection.kind === 'fasteners' && connection.fastener?.type !== 'bolt' && length !== undefined && first && second) {
       const through =
         orientation === 'horizontal' ? first.depth + second.depth : first.width + second.width;
       if (length > through + 1e-6) {

@@ -150,12 +150,20 @@ export function solveCase(
 
 function writeSegment(fields: Fields, i: number, s: Start, h: number, q0: number, q1: number): void {
   const [v, m, t, w] = s;
-  fields.shear.set([v, -h * q0, (-h * q1) / 2], 3 * i);
-  fields.moment.set([m, h * v, (-h * h * q0) / 2, (-h * h * q1) / 6], 4 * i);
-  fields.bend.set(
-    [w, h * t, (-h * h * m) / 2, (-(h ** 3) * v) / 6, (h ** 4 * q0) / 24, (h ** 4 * q1) / 120],
-    6 * i,
-  );
+  const { shear, moment, bend } = fields;
+  shear[3 * i] = v;
+  shear[3 * i + 1] = -h * q0;
+  shear[3 * i + 2] = (-h * q1) / 2;
+  moment[4 * i] = m;
+  moment[4 * i + 1] = h * v;
+  moment[4 * i + 2] = (-h * h * q0) / 2;
+  moment[4 * i + 3] = (-h * h * q1) / 6;
+  bend[6 * i] = w;
+  bend[6 * i + 1] = h * t;
+  bend[6 * i + 2] = (-h * h * m) / 2;
+  bend[6 * i + 3] = (-(h ** 3) * v) / 6;
+  bend[6 * i + 4] = (h ** 4 * q0) / 24;
+  bend[6 * i + 5] = (h ** 4 * q1) / 120;
 }
 
 /** A linear combination of load cases. */

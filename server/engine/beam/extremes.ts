@@ -171,7 +171,6 @@ function largestMoving(
   let size = floor;
   for (const sign of [1, -1] as const) {
     const at = sign === 1 ? q.max(values) : q.min(values);
-    const evaluateAt = (x: number, near: Station): number => effect(beam, loads, q, x, near, sign).value * sign;
     const note = (x: number, side: -1 | 1, value: number, near: Station): void => {
       if (!(value > size) || (best !== null && value <= Math.abs(best.value) * same)) return;
       size = value;
@@ -191,7 +190,7 @@ function largestMoving(
           : Math.max(Math.abs(fb - fa), ...neighbours(at, i)) / (b.x - a.x);
       if ((fa + fb) / 2 + (slope * (b.x - a.x)) / 2 <= size) continue;
       const near: Station = { ...a, side: 1 };
-      const found = goldenMaximum((x) => evaluateAt(x, near), a.x, b.x);
+      const found = peakBetween((x) => effect(beam, loads, q, x, near, sign).value * sign, a.x, b.x, fa, fb);
       note(found.x, 1, found.value, near);
     }
   }
@@ -232,41 +231,50 @@ function effect(
 }
 
 /**
- * The largest value between a and b: four parts first, as peaks under different axles may lie side by side,
- * then golden-section search (Kiefer 1953) about the best.
+ * The largest value between a and b, if it is inside: four parts first, as peaks under different axles may lie
+ * side by side, then a parabola through the best three, over and over (Brent 1973, without its golden steps
+ * while the parabola stays inside). The upper edge of smooth curves has smooth peaks, so this converges fast.
  */
-function goldenMaximum(f: (x: number) => number, a: number, b: number): { x: number; value: number } {
+function peakBetween(f: (x: number) => number, a: number, b: number, fa: number, fb: number): { x: number; value: number } {
   const h = (b - a) / 4;
-  let bestAt = 1;
-  let best = -Infinity;
-  for (let i = 1; i < 4; i++) {
-    const value = f(a + i * h);
-    if (value > best) {
-      best = value;
-      bestAt = i;
-    }
-  }
-  const ratio = (Math.sqrt(5) - 1) / 2;
-  let low = a + (bestAt - 1) * h;
-  let high = a + (bestAt + 1) * h;
-  let x1 = high - ratio * (high - low);
-  let x2 = low + ratio * (high - low);
-  let f1 = f(x1);
-  let f2 = f(x2);
-  for (let i = 0; i < 40; i++) {
-    if (f1 >= f2) {
-      high = x2;
-      x2 = x1;
-      f2 = f1;
-      x1 = high - ratio * (high - low);
-      f1 = f(x1);
+  const values = [fa, f(a + h), f(a + 2 * h), f(a + 3 * h), fb];
+  let best = 0;
+  for (let i = 1; i < 5; i++) if ((values[i] ?? 0) > (values[best] ?? 0)) best = i;
+  const middle = Math.min(3, Math.max(1, best));
+  let x0 = a + (middle - 1) * h;
+  let x1 = a + middle * h;
+  let x2 = a + (middle + 1) * h;
+  let f0 = values[middle - 1] ?? 0;
+  let f1 = values[middle] ?? 0;
+  let f2 = values[middle + 1] ?? 0;
+  if (f1 < f0 || f1 < f2) return f0 > f2 ? { x: x0, value: f0 } : { x: x2, value: f2 };
+  const close = 1e-8 * (b - a);
+  for (let i = 0; i < 30 && x2 - x0 > close; i++) {
+    const p = (x1 - x0) * (f1 - f2);
+    const q = (x1 - x2) * (f1 - f0);
+    const step = (p * (x1 - x0) - q * (x1 - x2)) / (2 * (p - q));
+    let x = x1 - step;
+    const half = x1 - x0 > x2 - x1 ? (x0 + x1) / 2 : (x1 + x2) / 2;
+    if (!(x > x0 && x < x2) || (i % 4 === 3 && Math.abs(x - x1) > close)) x = half;
+    if (Math.abs(x - x1) <= close) break;
+    const value = f(x);
+    if (value >= f1) {
+      if (x < x1) {
+        x2 = x1;
+        f2 = f1;
+      } else {
+        x0 = x1;
+        f0 = f1;
+      }
+      x1 = x;
+      f1 = value;
+    } else if (x < x1) {
+      x0 = x;
+      f0 = value;
     } else {
-      low = x1;
-      x1 = x2;
-      f1 = f2;
-      x2 = low + ratio * (high - low);
-      f2 = f(x2);
+      x2 = x;
+      f2 = value;
     }
   }
-  return f1 >= f2 ? { x: x1, value: f1 } : { x: x2, value: f2 };
+  return { x: x1, value: f1 };
 }

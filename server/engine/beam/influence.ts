@@ -1,4 +1,4 @@
-import type { BeamSystem, NodeState } from './system';
+import type { BeamSystem, SpanLoads } from './system';
 
 /**
  * An influence line: what a unit load at a does to one quantity, a piecewise cubic in a (Müller-Breslau).
@@ -18,89 +18,95 @@ export interface InfluenceLine {
 
 type Cubic = [number, number, number, number];
 
-/** Influence lines of a beam, from four solutions a span: the state at the nodes is cubic in the load's place. */
+/**
+ * Influence lines of a beam, from four solutions a span: the state at the nodes is cubic in the load's place.
+ * The cubics stand in flat tables, read four numbers at 4·(n·spans + e) for node n and a load in span e, so that
+ * the lines of hundreds of places can be put together without solving anything again.
+ */
 export class Influence {
   readonly starts: Float64Array;
   readonly lengths: Float64Array;
-  /** states[e][d]: coefficient of t^d of the node state for a unit load at t of span e */
-  private readonly states: NodeState[][];
-  /** cumulated ∫V from the left end to each node, as cubics: integral[e] has 4 numbers a node */
-  private readonly integral: Float64Array[];
+  private readonly momentLeft: Float64Array;
+  private readonly momentRight: Float64Array;
+  private readonly deflection: Float64Array;
+  /** ∫V from the left end to each node */
+  private readonly integral: Float64Array;
 
   constructor(readonly system: BeamSystem) {
     const { spans, nodes } = system;
     this.starts = Float64Array.from(nodes, (n) => n.x);
     this.lengths = Float64Array.from({ length: spans }, (_, e) => system.spanLength(e));
-    this.states = [];
-    this.integral = [];
-    const none = { shear: [0, 0], slope: [0, 0] } as const;
+    const size = 4 * spans * nodes.length;
+    this.momentLeft = new Float64Array(size);
+    this.momentRight = new Float64Array(size);
+    this.deflection = new Float64Array(size);
+    this.integral = new Float64Array(size);
     const nodeLoads = nodes.map(() => ({ force: 0, couple: 0 }));
+    const still: SpanLoads = { shear: [0, 0], slope: [0, 0] };
     for (let e = 0; e < spans; e++) {
       const s = (this.lengths[e] ?? 0) ** 2 / 6;
       // Unit load at t: shear [1 − t, −t]; EI·slope ℓ²/6·[2t − 3t² + t³, −(t − t³)].
-      const terms: { shear: [number, number]; slope: [number, number] }[] = [
+      const terms: SpanLoads[] = [
         { shear: [1, 0], slope: [0, 0] },
         { shear: [-1, -1], slope: [2 * s, -s] },
         { shear: [0, 0], slope: [-3 * s, 0] },
         { shear: [0, 0], slope: [s, s] },
       ];
-      const loads = nodes.slice(1).map(() => ({ shear: [...none.shear], slope: [...none.slope] }) as (typeof terms)[number]);
-      this.states.push(
-        terms.map((term) => {
-          loads[e] = term;
-          return system.solve(loads, nodeLoads);
-        }),
-      );
-      const cumulated = new Float64Array(4 * nodes.length);
-      for (let n = 1; n < nodes.length; n++) {
-        for (let d = 0; d < 4; d++) {
-          const state = this.states[e]?.[d];
-          cumulated[4 * n + d] =
-            (cumulated[4 * n - 4 + d] ?? 0) + (state?.momentLeft[n] ?? 0) - (state?.momentRight[n - 1] ?? 0);
+      const loads = nodes.slice(1).map(() => still);
+      terms.forEach((term, d) => {
+        loads[e] = term;
+        const state = system.solve(loads, nodeLoads);
+        for (let n = 0; n < nodes.length; n++) {
+          const at = 4 * (n * spans + e) + d;
+          this.momentLeft[at] = state.momentLeft[n] ?? 0;
+          this.momentRight[at] = state.momentRight[n] ?? 0;
+          this.deflection[at] = state.deflection[n] ?? 0;
+          if (n === 0) continue;
+          const before = at - 4 * spans;
+          this.integral[at] =
+            (this.integral[before] ?? 0) + (this.momentLeft[at] ?? 0) - (this.momentRight[before] ?? 0);
         }
-      }
-      this.integral.push(cumulated);
+      });
     }
   }
 
-  private cubic(e: number, of: (state: NodeState) => number): Cubic {
-    const s = this.states[e] ?? [];
-    const at = (d: number): number => {
-      const state = s[d];
-      return state ? of(state) : 0;
-    };
-    return [at(0), at(1), at(2), at(3)];
+  /** Adds weight × a node's cubics to a line of one cubic a span. */
+  private addNode(target: Float64Array, table: Float64Array, n: number, weight: number): void {
+    const { spans } = this.system;
+    const from = 4 * n * spans;
+    for (let i = 0; i < 4 * spans; i++) target[i] = (target[i] ?? 0) + weight * (table[from + i] ?? 0);
   }
 
-  /** (M_b − M_a)/ℓ of span m: its shear from the moments at its ends. */
-  private chord(e: number, m: number): Cubic {
-    const length = this.lengths[m] ?? 1;
-    return this.cubic(e, (s) => ((s.momentLeft[m + 1] ?? 0) - (s.momentRight[m] ?? 0)) / length);
+  /** Adds weight × (M_b − M_a)/ℓ of span m: its shear from the moments at its ends. */
+  private addChord(target: Float64Array, m: number, weight: number): void {
+    const w = weight / (this.lengths[m] ?? 1);
+    this.addNode(target, this.momentLeft, m + 1, w);
+    this.addNode(target, this.momentRight, m, -w);
+  }
+
+  private empty(): Float64Array {
+    return new Float64Array(4 * this.system.spans);
   }
 
   /** A line without kinks inside spans: one cubic a span. */
-  private plain(of: (e: number) => Cubic): InfluenceLine {
+  private plain(cubic: Float64Array): InfluenceLine {
     const { spans } = this.system;
-    const line: InfluenceLine = {
-      edges: this.starts,
-      cubic: new Float64Array(4 * spans),
-      span: new Int32Array(spans),
-      first: new Int32Array(spans + 1),
-      splits: [],
-    };
-    for (let e = 0; e < spans; e++) {
-      line.cubic.set(of(e), 4 * e);
-      line.span[e] = e;
-      line.first[e] = e;
+    const span = new Int32Array(spans);
+    const first = new Int32Array(spans + 1);
+    for (let e = 0; e <= spans; e++) {
+      if (e < spans) span[e] = e;
+      first[e] = e;
     }
-    line.first[spans] = spans;
-    return line;
+    return { edges: this.starts, cubic, span, first, splits: [] };
   }
 
-  /** Adds to a plain line the terms that hold only left, or only right, of a place x in span m. */
-  private split(base: InfluenceLine, at: { x: number; m: number; left: Cubic; right: Cubic }[]): InfluenceLine {
-    const places = at.filter(({ x, m }) => x > (this.starts[m] ?? 0) && x < (this.starts[m + 1] ?? 0));
-    const splits = [...new Set(places.map((p) => p.x))].sort((a, b) => a - b);
+  /** A line that has, besides its cubics, terms that hold only left, or only right, of places inside spans. */
+  private split(base: Float64Array, at: readonly OwnSpan[]): InfluenceLine {
+    const splits: number[] = [];
+    for (const { x, m } of at) {
+      if (x > (this.starts[m] ?? 0) && x < (this.starts[m + 1] ?? 0) && !splits.includes(x)) splits.push(x);
+    }
+    if (splits.length > 1) splits.sort((a, b) => a - b);
     const { spans } = this.system;
     const pieces = spans + splits.length;
     const line: InfluenceLine = {
@@ -111,21 +117,26 @@ export class Influence {
       splits,
     };
     let piece = 0;
+    let next = 0;
     for (let e = 0; e < spans; e++) {
       line.first[e] = piece;
-      const begin = this.starts[e] ?? 0;
+      let from = this.starts[e] ?? 0;
       const end = this.starts[e + 1] ?? 0;
-      const inner = splits.filter((x) => x > begin && x < end);
-      for (const from of [begin, ...inner]) {
+      for (;;) {
         line.edges[piece] = from;
         line.span[piece] = e;
-        for (let d = 0; d < 4; d++) line.cubic[4 * piece + d] = base.cubic[4 * e + d] ?? 0;
+        const k = 4 * piece;
+        for (let d = 0; d < 4; d++) line.cubic[k + d] = base[4 * e + d] ?? 0;
         for (const { x, m, left, right } of at) {
           if (m !== e) continue;
           const own = from < x ? left : right;
-          for (let d = 0; d < 4; d++) line.cubic[4 * piece + d] = (line.cubic[4 * piece + d] ?? 0) + (own[d] ?? 0);
+          for (let d = 0; d < 4; d++) line.cubic[k + d] = (line.cubic[k + d] ?? 0) + (own[d] ?? 0);
         }
         piece++;
+        const cut = splits[next];
+        if (cut === undefined || cut >= end) break;
+        from = cut;
+        next++;
       }
     }
     line.first[spans] = pieces;
@@ -135,28 +146,32 @@ export class Influence {
 
   /** Upward reaction of the support at node n. */
   reaction(n: number): InfluenceLine {
+    const cubic = this.empty();
     const node = this.system.nodes[n];
     if (node?.support?.kind === 'spring') {
-      const k = (node.support.stiffness ?? 0) / this.system.EI;
-      return this.plain((e) => this.cubic(e, (s) => k * (s.deflection[n] ?? 0)));
+      this.addNode(cubic, this.deflection, n, (node.support.stiffness ?? 0) / this.system.EI);
+      return this.plain(cubic);
     }
-    return this.plain((e) => {
-      const sum: Cubic = [0, 0, 0, 0];
-      if (n < this.system.spans) this.chord(e, n).forEach((c, d) => (sum[d] = (sum[d] ?? 0) + c));
-      if (n > 0) this.chord(e, n - 1).forEach((c, d) => (sum[d] = (sum[d] ?? 0) - c));
-      // The load's own share of its span: (1 − t) to the left node, t to the right.
-      if (e === n) {
-        sum[0] += 1;
-        sum[1] -= 1;
-      }
-      if (e === n - 1) sum[1] += 1;
-      return sum;
-    });
+    const { spans } = this.system;
+    // The load's own share of its span, (1 − t) to the left node and t to the right, and the chords beside.
+    if (n < spans) {
+      this.addChord(cubic, n, 1);
+      cubic[4 * n] = (cubic[4 * n] ?? 0) + 1;
+      cubic[4 * n + 1] = (cubic[4 * n + 1] ?? 0) - 1;
+    }
+    if (n > 0) {
+      this.addChord(cubic, n - 1, -1);
+      cubic[4 * n - 3] = (cubic[4 * n - 3] ?? 0) + 1;
+    }
+    return this.plain(cubic);
   }
 
   /** Moment of the fixed support at node n. */
   supportMoment(n: number): InfluenceLine {
-    return this.plain((e) => this.cubic(e, (s) => (s.momentRight[n] ?? 0) - (s.momentLeft[n] ?? 0)));
+    const cubic = this.empty();
+    this.addNode(cubic, this.momentRight, n, 1);
+    this.addNode(cubic, this.momentLeft, n, -1);
+    return this.plain(cubic);
   }
 
   /**
@@ -164,26 +179,22 @@ export class Influence {
    * right of it (`side` 1, spans from m on count). Neither depends on the place itself.
    */
   spanShear(m: number, side: -1 | 1): InfluenceLine {
-    return this.plain((e) => {
-      const c = this.chord(e, m);
-      if (e === m) {
-        c[1] -= 1;
-        if (side === 1) c[0] += 1;
-      }
-      return c;
-    });
+    const cubic = this.empty();
+    this.addChord(cubic, m, 1);
+    cubic[4 * m + 1] = (cubic[4 * m + 1] ?? 0) - 1;
+    if (side === 1) cubic[4 * m] = (cubic[4 * m] ?? 0) + 1;
+    return this.plain(cubic);
   }
 
   /** Shear at x, in span m. */
   shear(x: number, m: number): InfluenceLine {
-    return this.split(
-      this.plain((e) => this.chord(e, m)),
-      [{ x, m, left: [0, -1, 0, 0], right: [1, -1, 0, 0] }],
-    );
+    const cubic = this.empty();
+    this.addChord(cubic, m, 1);
+    return this.split(cubic, [{ x, m, left: [0, -1, 0, 0], right: [1, -1, 0, 0] }]);
   }
 
   /** M at x of the span's own simply supported beam: ℓ·t(1 − ξ) for a load left of x, ℓ·ξ(1 − t) right of it. */
-  private ownMoment(x: number, m: number, sign: number): { x: number; m: number; left: Cubic; right: Cubic } {
+  private ownMoment(x: number, m: number, sign: number): OwnSpan {
     const length = this.lengths[m] ?? 1;
     const xi = (x - (this.starts[m] ?? 0)) / length;
     return {
@@ -197,71 +208,57 @@ export class Influence {
   /** Moment at x, in span m. */
   moment(x: number, m: number): InfluenceLine {
     const xi = (x - (this.starts[m] ?? 0)) / (this.lengths[m] ?? 1);
-    return this.split(
-      this.plain((e) => this.cubic(e, (s) => (s.momentRight[m] ?? 0) * (1 - xi) + (s.momentLeft[m + 1] ?? 0) * xi)),
-      [this.ownMoment(x, m, 1)],
-    );
+    const cubic = this.empty();
+    this.addNode(cubic, this.momentRight, m, 1 - xi);
+    this.addNode(cubic, this.momentLeft, m + 1, xi);
+    return this.split(cubic, [this.ownMoment(x, m, 1)]);
   }
 
-  /** ∫V from the left end of the beam to x, in span m: the moment without its jumps. */
-  private upTo(x: number, m: number): { base: (e: number) => Cubic; own: ReturnType<Influence['ownMoment']> } {
-    const along = x - (this.starts[m] ?? 0);
-    return {
-      base: (e) => {
-        const sums = this.integral[e] ?? new Float64Array(0);
-        const c = this.chord(e, m);
-        return [0, 1, 2, 3].map((d) => (sums[4 * m + d] ?? 0) + along * (c[d] ?? 0)) as Cubic;
-      },
-      own: this.ownMoment(x, m, 1),
-    };
+  /** Adds weight × ∫V from the left end of the beam to x, in span m, without the span's own part. */
+  private addIntegral(target: Float64Array, x: number, m: number, weight: number): void {
+    this.addNode(target, this.integral, m, weight);
+    this.addChord(target, m, weight * (x - (this.starts[m] ?? 0)));
   }
 
   /** ∫V dx from a to b (mm): what a fastener's stretch collects for one newton. */
   shearIntegral(a: number, b: number): InfluenceLine {
     const spanOfA = this.system.spanAt(a);
     const spanOfB = this.system.spanAt(b);
-    const low = this.upTo(a, spanOfA);
-    const high = this.upTo(b, spanOfB);
-    return this.split(
-      this.plain((e) => {
-        const p = high.base(e);
-        const q = low.base(e);
-        return [p[0] - q[0], p[1] - q[1], p[2] - q[2], p[3] - q[3]];
-      }),
-      [high.own, this.ownMoment(a, spanOfA, -1)],
-    );
+    const cubic = this.empty();
+    this.addIntegral(cubic, b, spanOfB, 1);
+    this.addIntegral(cubic, a, spanOfA, -1);
+    return this.split(cubic, [this.ownMoment(b, spanOfB, 1), this.ownMoment(a, spanOfA, -1)]);
   }
 
   /** EI times the deflection at x, in span m. */
   bend(x: number, m: number): InfluenceLine {
     const length = this.lengths[m] ?? 1;
     const xi = (x - (this.starts[m] ?? 0)) / length;
-    const s = length * length / 6;
-    const fromLeft = s * (2 * xi - 3 * xi ** 2 + xi ** 3);
-    const fromRight = s * (xi - xi ** 3);
+    const s = (length * length) / 6;
     const c = length ** 3 / 6;
     const r = 1 - xi;
-    return this.split(
-      this.plain((e) =>
-        this.cubic(
-          e,
-          (state) =>
-            (state.deflection[m] ?? 0) * r +
-            (state.deflection[m + 1] ?? 0) * xi +
-            (state.momentRight[m] ?? 0) * fromLeft +
-            (state.momentLeft[m + 1] ?? 0) * fromRight,
-        ),
-      ),
-      [
-        {
-          x,
-          m,
-          // ℓ³/6·t(1−ξ)(1 − (1−ξ)² − t²) for a load left of x, its mirror right of it.
-          left: [0, c * r * (1 - r * r), 0, -c * r],
-          // ℓ³/6·(1−t)ξ(1 − (1−t)² − ξ²) = ℓ³/6·ξ·[(1−t)(1−ξ²) − (1−t)³]
-          right: [-c * xi * xi * xi, c * xi * (2 + xi * xi), -3 * c * xi, c * xi],
-        },
-      ],
-    );
+    const cubic = this.empty();
+    this.addNode(cubic, this.deflection, m, r);
+    this.addNode(cubic, this.deflection, m + 1, xi);
+    this.addNode(cubic, this.momentRight, m, s * (2 * xi - 3 * xi ** 2 + xi ** 3));
+    this.addNode(cubic, this.momentLeft, m + 1, s * (xi - xi ** 3));
+    return this.split(cubic, [
+      {
+        x,
+        m,
+        // ℓ³/6·t(1−ξ)(1 − (1−ξ)² − t²) for a load left of x, its mirror right of it:
+        // ℓ³/6·(1−t)ξ(1 − (1−t)² − ξ²) = ℓ³/6·ξ·[(1−t)(1−ξ²) − (1−t)³]
+        left: [0, c * r * (1 - r * r), 0, -c * r],
+        right: [-c * xi * xi * xi, c * xi * (2 + xi * xi), -3 * c * xi, c * xi],
+      },
+    ]);
   }
+}
+
+/** What the loaded span itself adds at x: one cubic for loads left of x, one for loads right of it. */
+interface OwnSpan {
+  x: number;
+  m: number;
+  left: Cubic;
+  right: Cubic;
 }

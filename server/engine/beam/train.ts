@@ -162,36 +162,62 @@ export function eachStretch(
 export function trainExtremes(train: Train, line: InfluenceLine, influence: Influence): TrainExtremes {
   const result: TrainExtremes = { max: -Infinity, maxAt: train.from, min: Infinity, minAt: train.from };
   const sum = new TrainSum(train, line, influence);
-  const note = (p: number, value: number): void => {
-    if (value > result.max) {
-      result.max = value;
-      result.maxAt = p;
+  const { stops, ends, offsets } = train;
+  const cuts: number[] = [];
+  for (const x of line.splits) for (let i = 0; i < offsets.length; i++) cuts.push(x - (offsets[i] ?? 0));
+  if (line.splits.length > 0 && cuts.length > 1) cuts.sort(ascending);
+  let next = 0;
+  for (let k = 0; k < stops.length; k++) {
+    let from = stops[k] ?? 0;
+    const end = ends[k] ?? 0;
+    while (next < cuts.length && (cuts[next] ?? 0) <= from) next++;
+    for (;;) {
+      const cut = cuts[next];
+      const inside = cut !== undefined && cut < end;
+      const to = inside ? cut : end;
+      extremesOfStretch(sum, k, from, to, result);
+      if (!inside) break;
+      from = to;
+      next++;
+      while (next < cuts.length && (cuts[next] ?? 0) <= from) next++;
     }
-    if (value < result.min) {
-      result.min = value;
-      result.minAt = p;
-    }
-  };
-  eachStretch(train, line, (k, a, b) => {
-    const middle = (a + b) / 2;
-    sum.at(k, a, middle);
-    const fa = sum.value;
-    const sa = sum.slope;
-    note(a, fa);
-    const h = b - a;
-    if (h === 0) return;
-    sum.at(k, b, middle);
-    const fb = sum.value;
-    const sb = sum.slope;
-    note(b, fb);
-    for (const u of stationary(fb - fa, h * sa, h * sb)) {
-      if (u <= 0 || u >= 1) continue;
-      const p = a + u * h;
-      sum.at(k, p, middle);
-      note(p, sum.value);
-    }
-  });
+  }
   return result;
+}
+
+function ascending(a: number, b: number): number {
+  return a - b;
+}
+
+function extremesOfStretch(sum: TrainSum, k: number, a: number, b: number, result: TrainExtremes): void {
+  const middle = (a + b) / 2;
+  sum.at(k, a, middle);
+  const fa = sum.value;
+  const h = b - a;
+  const sa = h * sum.slope;
+  note(result, a, fa);
+  if (h === 0) return;
+  sum.at(k, b, middle);
+  const fb = sum.value;
+  note(result, b, fb);
+  const roots = stationary(fb - fa, sa, h * sum.slope);
+  for (let i = 0; i < roots.length; i++) {
+    const u = roots[i] ?? -1;
+    if (!(u > 0 && u < 1)) continue;
+    sum.at(k, a + u * h, middle);
+    note(result, a + u * h, sum.value);
+  }
+}
+
+function note(result: TrainExtremes, p: number, value: number): void {
+  if (value > result.max) {
+    result.max = value;
+    result.maxAt = p;
+  }
+  if (value < result.min) {
+    result.min = value;
+    result.minAt = p;
+  }
 }
 
 const none: readonly number[] = [];

@@ -1,7 +1,7 @@
 import type { Beam, CombinedLoads } from '../beam/combinations';
-import { shearPositions, type Position } from '../beam/extremes';
+import type { Position } from '../beam/extremes';
 import type { Station } from '../beam/stations';
-import { trainExtremes, type TrainExtremes } from '../beam/train';
+import { trainExtremes } from '../beam/train';
 import { raiseCells, valueAt, weightedSum, type Piecewise } from '../numeric/piecewise';
 import { reachAt, reachOver } from './train-reach';
 import { addReach, farthest, type Reach } from './reach';
@@ -22,9 +22,9 @@ export interface FlowPeak {
 /** What the interfaces of a member share: cells, stretches and trains are looked at once for all of them. */
 export class SharedDemand {
   private readonly cellCache = new Map<string, Float64Array[]>();
-  private readonly stretchCache = new Map<string, TrainExtremes[]>();
+  private readonly stretchCache = new Map<string, Float64Array>();
   private readonly reachCache = new Map<string, Reach[]>();
-  private readonly integrals: Float64Array[];
+  private readonly cumulated: Float64Array[];
 
   constructor(
     readonly beam: Beam,
@@ -32,7 +32,7 @@ export class SharedDemand {
     readonly stations: readonly Station[],
     readonly stationShear: readonly { max: Float64Array; min: Float64Array }[],
   ) {
-    this.integrals = beam.combinations.map(({ fields }) => cumulated(beam.events, fields.shear));
+    this.cumulated = beam.combinations.map(({ fields }) => cumulated(beam.events, fields.shear));
   }
 
   /** The largest |V| of each combination within each cell of a grid. */
@@ -57,7 +57,7 @@ export class SharedDemand {
 
   private upTo(c: number, x: number): number {
     const { events, combinations } = this.beam;
-    const sums = this.integrals[c];
+    const sums = this.cumulated[c];
     const shear = combinations[c]?.fields.shear;
     if (!sums || !shear) return 0;
     let low = 0;
@@ -76,15 +76,26 @@ export class SharedDemand {
     );
   }
 
-  /** Largest and smallest ∫V dx over a stretch that each train can bring. */
-  trainIntegrals(a: number, b: number): TrainExtremes[] {
-    const { influence, trains } = this.beam;
-    if (!influence) return [];
+  /** ∫V dx over a stretch under each combination, the largest in size over the positions of what moves. */
+  integrals(a: number, b: number): Float64Array {
     const key = `${a} ${b}`;
     const known = this.stretchCache.get(key);
     if (known) return known;
-    const line = influence.shearIntegral(a, b);
-    const found = trains.map((t) => trainExtremes(t, line, influence));
+    const { influence, trains, combinations } = this.beam;
+    const line = influence?.shearIntegral(a, b);
+    const moving = influence && line ? trains.map((t) => trainExtremes(t, line, influence)) : [];
+    const found = new Float64Array(combinations.length);
+    for (let c = 0; c < combinations.length; c++) {
+      let max = this.stillIntegral(c, a, b);
+      let min = max;
+      for (const { train, factor } of combinations[c]?.trains ?? []) {
+        const e = moving[train];
+        if (!e) continue;
+        max += factor * (factor > 0 ? e.max : e.min);
+        min += factor * (factor > 0 ? e.min : e.max);
+      }
+      found[c] = max >= -min ? max : min;
+    }
     this.stretchCache.set(key, found);
     return found;
   }
@@ -162,15 +173,14 @@ export class InterfaceDemand {
     return this.shared.beam.combinations.some((loads, c) => this.still[c] !== null || this.movesSideways(loads));
   }
 
-  /** The worst place under each combination. */
+  /** The worst place under each combination; where the shear alone tells the positions they are left out. */
   peaks(): FlowPeak[] {
     const { beam } = this.shared;
     return beam.combinations.map((loads, c): FlowPeak => {
       const still = this.still[c] ?? null;
       if (this.movesSideways(loads)) return this.movingPeak(loads, c);
       if (still) {
-        const peak = peakOfResultant(loads, still, this.flowPerShear);
-        return { ...peak, positions: shearPositions(beam, loads, peak.x, peak.shear).positions };
+        return { ...peakOfResultant(loads, still, this.flowPerShear), positions: [] };
       }
       const { value, x } = loads.shearPeak;
       const along = Math.abs(value) * this.flowPerShear;
@@ -220,28 +230,16 @@ export class InterfaceDemand {
     const { shared } = this;
     const loads = shared.beam.combinations[c];
     if (!loads) return { along: 0, across: 0 };
-    const along = shared.stillIntegral(c, a, b);
     const still = this.still[c] ?? null;
     const across = still ? integralOver(still, a, b) : 0;
     if (this.movesSideways(loads)) {
-      let points: Reach[] = [{ along, across, positions: [] }];
+      let points: Reach[] = [{ along: shared.stillIntegral(c, a, b), across, positions: [] }];
       for (const { train, factor } of loads.trains) {
         points = addReach(points, shared.stretchReach(train, a, b), factor, factor * (this.trainAcross[train] ?? 0));
       }
       return farthest(points, this.flowPerShear).at;
     }
-    let max = along;
-    let min = along;
-    if (loads.trains.length > 0) {
-      const trains = shared.trainIntegrals(a, b);
-      for (const { train, factor } of loads.trains) {
-        const e = trains[train];
-        if (!e) continue;
-        max += factor * (factor > 0 ? e.max : e.min);
-        min += factor * (factor > 0 ? e.min : e.max);
-      }
-    }
-    return { along: max >= -min ? max : min, across };
+    return { along: shared.integrals(a, b)[c] ?? 0, across };
   }
 
   private movingAt(loads: CombinedLoads, c: number, x: number, side: -1 | 1): { value: number; at: Reach } {

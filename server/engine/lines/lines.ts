@@ -98,11 +98,8 @@ class BeamChapter {
     const { peak, peakCombination } = schedule;
     const loads = w.beam.combinations[peakCombination];
     if (!loads) return { shear: null, across: null };
-    let { positions } = peak;
-    let { side } = shearPositions(w.beam, loads, peak.x, peak.shear);
-    if (positions.length === 0) {
-      ({ positions, side } = shearPositions(w.beam, loads, peak.x, peak.shear));
-    }
+    const { positions } = peak;
+    const { side } = shearPositions(w.beam, loads, peak.x, peak.shear);
     const shear = this.shear(peakCombination, { positions, x: peak.x, side }, peak.shear, 'Shear');
     let across: Term | null = null;
     if (demand.isCrossed && peak.across > 0) {

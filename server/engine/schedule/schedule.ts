@@ -1,5 +1,6 @@
 import type { MemberDocument, Rules } from '@shared/schemas/member';
 import type { InterfaceResult, Notice } from '@shared/schemas/result';
+import { shearPositions } from '../beam/extremes';
 import { rulesOf } from '../input/places';
 import { rowsOf } from '../flow/section-flow';
 import type { FlowPeak, InterfaceDemand } from '../demand/demand';
@@ -59,7 +60,12 @@ export function scheduleInterface(
     const best = peaks[peakCombination]?.value ?? 0;
     if (p.value > nothing && p.value > best * over) peakCombination = c;
   });
-  const peak = peaks[peakCombination] ?? { value: 0, x: 0, shear: 0, along: 0, across: 0, positions: [] };
+  const found = peaks[peakCombination] ?? { value: 0, x: 0, shear: 0, along: 0, across: 0, positions: [] };
+  const loads = beam.combinations[peakCombination];
+  const peak =
+    loads && found.positions.length === 0
+      ? { ...found, positions: shearPositions(beam, loads, found.x, found.shear).positions }
+      : found;
   const { needed, governing } = neededAtStations(demand, nothing);
   const schedule: Schedule = {
     rows,

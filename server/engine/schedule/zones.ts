@@ -65,24 +65,24 @@ export function bestZones(grid: readonly number[], needs: Float64Array, spacings
 const sameCost = 1e-12;
 
 interface Table {
-  /** cost[k][j]: fewest fasteners a row up to grid point j with k + 1 zones */
-  cost: Float64Array[];
-  previous: Int32Array[];
-  spacing: Float64Array[];
+  zones: number;
+  /** cost[j·zones + k]: fewest fasteners a row up to grid point j with k + 1 zones */
+  cost: Float64Array;
+  previous: Int32Array;
+  spacing: Float64Array;
 }
 
 function cover(points: readonly number[], needs: Float64Array, spacings: Spacings, zones: number, shortest: number): Table {
   const n = points.length - 1;
-  const table: Table = { cost: [], previous: [], spacing: [] };
-  for (let k = 0; k < zones; k++) {
-    table.cost.push(new Float64Array(n + 1).fill(Infinity));
-    table.previous.push(new Int32Array(n + 1));
-    table.spacing.push(new Float64Array(n + 1));
-  }
+  const size = (n + 1) * zones;
+  const cost = new Float64Array(size).fill(Infinity);
+  const previous = new Int32Array(size);
+  const kept = new Float64Array(size);
   for (let j = 1; j <= n; j++) {
     let need = 0;
     let spacing = spacingFor(0, spacings);
     const end = points[j] ?? 0;
+    const row = j * zones;
     for (let i = j - 1; i >= 0; i--) {
       const cell = needs[i] ?? 0;
       if (cell > need) {
@@ -93,28 +93,38 @@ function cover(points: readonly number[], needs: Float64Array, spacings: Spacing
       const length = end - (points[i] ?? 0);
       if (length < shortest) continue;
       const own = length / spacing;
-      for (let k = 0; k < zones; k++) {
-        const before = k === 0 ? (i === 0 ? 0 : Infinity) : (table.cost[k - 1]?.[i] ?? Infinity);
-        const total = before + own;
-        const cost = table.cost[k];
-        if (!cost || !(total < (cost[j] ?? Infinity) * (1 - sameCost))) continue;
-        cost[j] = total;
-        const previous = table.previous[k];
-        const kept = table.spacing[k];
-        if (previous) previous[j] = i;
-        if (kept) kept[j] = spacing;
+      if (i === 0) {
+        cost[row] = own;
+        previous[row] = 0;
+        kept[row] = spacing;
+        break;
+      }
+      const from = i * zones;
+      const most = Math.min(zones, i + 1);
+      for (let k = 1; k < most; k++) {
+        const total = (cost[from + k - 1] ?? Infinity) + own;
+        if (total < (cost[row + k] ?? Infinity) * (1 - sameCost)) {
+          cost[row + k] = total;
+          previous[row + k] = i;
+          kept[row + k] = spacing;
+        }
       }
     }
   }
-  return table;
+  return { zones, cost, previous, spacing: kept };
+}
+
+function costAt(table: Table, j: number, k: number): number {
+  return table.cost[j * table.zones + k] ?? Infinity;
 }
 
 function trace(points: readonly number[], table: Table, zones: number, last: number): Zone[] {
   const found: Zone[] = [];
   let j = last;
   for (let k = zones - 1; k >= 0; k--) {
-    const i = table.previous[k]?.[j] ?? 0;
-    found.push({ from: points[i] ?? 0, to: points[j] ?? 0, spacing: table.spacing[k]?.[j] ?? 0 });
+    const at = j * table.zones + k;
+    const i = table.previous[at] ?? 0;
+    found.push({ from: points[i] ?? 0, to: points[j] ?? 0, spacing: table.spacing[at] ?? 0 });
     j = i;
   }
   return found.reverse();
@@ -132,7 +142,7 @@ function bestFree(
   let best = 0;
   let least = Infinity;
   for (let k = 0; k < maxZones; k++) {
-    const cost = table.cost[k]?.[last] ?? Infinity;
+    const cost = costAt(table, last, k);
     if (cost < least * (1 - sameCost)) {
       least = cost;
       best = k + 1;
@@ -167,7 +177,7 @@ function bestMirrored(
       if (spacing <= 0) break;
       const across = length - 2 * (points[i] ?? 0);
       if (across < shortest || across <= 0) continue;
-      const side = z === 0 ? (i === 0 ? 0 : Infinity) : (table.cost[z - 1]?.[i] ?? Infinity);
+      const side = z === 0 ? (i === 0 ? 0 : Infinity) : costAt(table, i, z - 1);
       const cost = 2 * side + across / spacing;
       if (cost < least * (1 - sameCost)) {
         least = cost;
