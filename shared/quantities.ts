@@ -4,10 +4,21 @@ export type UnitSystem = 'metric' | 'us';
 
 /**
  * What a number measures. `length` runs along the beam (feet and inches in US units), `size` is a dimension of a
- * piece or fastener or a spacing (inches); `flow` is force per length at an interface, `lineLoad` a load on the beam.
+ * piece or fastener or a spacing (inches); `flow` is force per length at an interface, `lineLoad` a load on the beam;
+ * `rigidity` is EI.
  */
 export type Quantity =
-  'length' | 'size' | 'force' | 'lineLoad' | 'flow' | 'moment' | 'stress' | 'stiffness' | 'density' | 'mass';
+  | 'length'
+  | 'size'
+  | 'force'
+  | 'lineLoad'
+  | 'flow'
+  | 'moment'
+  | 'stress'
+  | 'stiffness'
+  | 'density'
+  | 'mass'
+  | 'rigidity';
 
 /** mm, by definition */
 export const INCH = 25.4;
@@ -122,6 +133,8 @@ interface Shown {
   factor: number;
 }
 
+const rigidities = table({ 'kn*m2': 1e9, 'n*mm2': 1, 'lb*in2': POUND * INCH ** 2 });
+
 export const quantities: Record<
   Quantity,
   { units: ReadonlyMap<string, number>; metric: Shown; us: Shown; like: Record<UnitSystem, string> }
@@ -185,5 +198,11 @@ export const quantities: Record<
     metric: { unit: 'kg/m', factor: 1 },
     us: { unit: 'lb/ft', factor: 0.45359237 / 0.3048 },
     like: { metric: '7.4', us: '5' },
+  },
+  rigidity: {
+    units: rigidities,
+    metric: { unit: 'kN·m²', factor: 1e9 },
+    us: { unit: 'lb·in²', factor: POUND * INCH ** 2 },
+    like: { metric: '82', us: '28000000' },
   },
 };

@@ -51,6 +51,7 @@ export function formatNumber(value: number, decimals = 0): string {
 export function formatFigures(value: number): string {
   const size = Math.abs(value);
   if (size === 0 || size < 1e-9) return '0';
+  if (size >= 1e6 && size < 1e7) return formatNumber(Math.round(value / 1000) * 1000);
   if (size >= 1e7) {
     const power = Math.floor(Math.log10(size) / 3) * 3;
     return `${formatFigures(value / 10 ** power)} · 10${superscript(power)}`;

@@ -1,6 +1,6 @@
 import { createBrowserRouter, Navigate } from 'react-router-dom';
 import { BrokenPage, NotFound } from './not-found';
-import { Shell } from './shell';
+import { Shell, Starting } from './shell';
 import { SignInPage } from './sign-in-page';
 
 /** Every address of the application. Screens behind the sign-in are loaded when they are first gone to. */
@@ -10,6 +10,7 @@ export const router = createBrowserRouter([
     path: '/',
     element: <Shell />,
     errorElement: <BrokenPage />,
+    hydrateFallbackElement: <Starting />,
     children: [
       { index: true, element: <Navigate replace to="/projects" /> },
       {

@@ -40,6 +40,15 @@ function TopBar({ person }: { person: Person }) {
   );
 }
 
+/** What stands there while the first screen is on its way. */
+export function Starting() {
+  return (
+    <main className="mx-auto max-w-360 p-6">
+      <Skeleton label="Loading" />
+    </main>
+  );
+}
+
 /** Everything behind the sign-in: the top bar and the screen; sends strangers to sign in and back to here. */
 export function Shell() {
   const session = useQuery(sessionQuery);
@@ -50,12 +59,7 @@ export function Shell() {
     if (person) applyTheme(person.theme);
   }, [person]);
 
-  if (session.isPending)
-    return (
-      <main className="mx-auto max-w-360 p-6">
-        <Skeleton label="Loading" />
-      </main>
-    );
+  if (session.isPending) return <Starting />;
   if (session.isError)
     return (
       <main className="p-6">

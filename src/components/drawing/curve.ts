@@ -114,7 +114,8 @@ export interface WantedLabel {
 
 const CHARACTER = 6.2;
 
-const spanOf = ({ x, text, anchor }: WantedLabel): [number, number] => {
+/** The pixels that a label takes from left to right. */
+export const labelSpan = ({ x, text, anchor }: WantedLabel): [number, number] => {
   const wide = text.length * CHARACTER;
   const from = anchor === 'start' ? x : anchor === 'end' ? x - wide : x - wide / 2;
   return [from, from + wide];
@@ -124,9 +125,9 @@ const spanOf = ({ x, text, anchor }: WantedLabel): [number, number] => {
 export function withoutCollisions<T extends WantedLabel>(labels: readonly T[], lineHeight = 12): T[] {
   const kept: T[] = [];
   for (const label of labels) {
-    const [from, to] = spanOf(label);
+    const [from, to] = labelSpan(label);
     const free = kept.every((other) => {
-      const [start, end] = spanOf(other);
+      const [start, end] = labelSpan(other);
       return to + 4 < start || from - 4 > end || Math.abs(other.y - label.y) >= lineHeight;
     });
     if (free) kept.push(label);

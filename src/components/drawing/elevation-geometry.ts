@@ -3,7 +3,7 @@ import { boundsOf } from './section-geometry';
 
 /** By how much depth may be drawn larger or smaller than length, so that it can be written in a word. */
 const EXAGGERATIONS = [
-  0.05, 0.1, 0.2, 0.25, 0.5, 0.75, 1, 1.25, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10, 12, 15, 20, 25, 30, 40, 50, 75,
+  0.05, 0.1, 0.2, 0.25, 0.5, 0.75, 1, 1.2, 1.5, 2, 2.5, 3, 4, 5, 6, 8, 10, 12, 15, 20, 25, 30, 40, 50, 75,
   100,
 ];
 

@@ -58,7 +58,11 @@ export const FlowPanel = memo(function FlowPanel({
   const wanted: WantedLabel[] = [];
   if (most > 0) {
     const text = `needed ${write(most)}`;
-    wanted.push({ ...anchorAt(scale.at(x[peak] ?? 0), scale, text), y: at(most) - 5, text });
+    const last = x[needed.findLastIndex((value) => value >= most * (1 - 1e-9))] ?? 0;
+    const first = x[peak] ?? 0;
+    // the middle of a plateau; of two peaks apart the first
+    const along = last - first < 0.2 * scale.length ? (first + last) / 2 : first;
+    wanted.push({ ...anchorAt(scale.at(along), scale, text), y: base - 7, text });
   }
   const first = carried.reduce<Step | undefined>(
     (best, step) => (best && best.value >= step.value ? best : step),

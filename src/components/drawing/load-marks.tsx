@@ -1,13 +1,13 @@
 import { formatQuantity, formatWithUnit } from '@shared/units';
 import type { UnitSystem } from '@shared/units';
 import type { Load, LoadCase } from '@shared/schemas/member';
-import { withoutCollisions } from './curve';
+import { labelSpan, withoutCollisions } from './curve';
 import type { WantedLabel, XScale } from './curve';
 
 /** The height kept for loads above an elevation, and the part of it that combs and arrows take. */
 export const LOADS_HEIGHT = 64;
-const BAND = 17;
-const COMB = 10;
+const BAND = 19;
+const COMB = 8;
 const MOST_BANDS = 3;
 
 interface Shown {
@@ -40,16 +40,17 @@ function Comb({ load, scale, base }: { load: Distributed; scale: XScale; base: n
   const x1 = scale.at(Math.max(load.from, load.to));
   const [start, end] = load.kind === 'uniform' ? [load.value, load.value] : [load.start, load.end];
   const most = Math.max(Math.abs(start), Math.abs(end), 1e-12);
-  const height = (at: number) => COMB * Math.abs((start + (end - start) * at) / most);
+  const valueAt = (at: number) => start + (end - start) * at;
+  const height = (at: number) => COMB * Math.abs(valueAt(at) / most);
+  // what presses hangs its teeth from the ridge onto the beam; what lifts stands on a ridge at the beam
+  const ridgeAt = (at: number) => (valueAt(at) < 0 ? base : base - height(at));
   const teeth = Math.max(2, Math.round((x1 - x0) / 29));
   const comb = Array.from({ length: teeth + 1 }, (_, index) => {
     const at = index / teeth;
-    return `M${(x0 + (x1 - x0) * at).toFixed(1)} ${base}v${(-Math.max(height(at), load.kind === 'uniform' ? COMB : 0)).toFixed(1)}`;
+    return `M${(x0 + (x1 - x0) * at).toFixed(1)} ${base}v${(-height(at)).toFixed(1)}`;
   }).join('');
-  const ridge =
-    load.kind === 'uniform'
-      ? `M${x0} ${base - COMB}H${x1}`
-      : `M${x0} ${base - height(0)}L${x1} ${base - height(1)}`;
+  const turn = start * end < 0 ? start / (start - end) : null;
+  const ridge = `M${x0} ${ridgeAt(0)}${turn === null ? '' : `L${x0 + (x1 - x0) * turn} ${base}`}L${x1} ${ridgeAt(1)}`;
   return (
     <g fill="none" stroke="var(--ink2)">
       <path d={comb} strokeOpacity={0.55} />
@@ -90,15 +91,16 @@ function Train({
   base,
 }: {
   load: Extract<Load, { kind: 'moving' }>;
-  standing: number;
+  /** where its offset 0 is drawn; null leaves only the travel line */
+  standing: number | null;
   scale: XScale;
   base: number;
 }) {
   const from = scale.at(Math.max(0, Math.min(load.from, load.to)));
   const to = scale.at(Math.min(scale.length, Math.max(load.from, load.to)));
-  const axles = load.axles
-    .map((axle) => standing + axle.offset)
-    .filter((x) => x >= -1e-6 && x <= scale.length + 1e-6);
+  const axles = (standing === null ? [] : load.axles.map((axle) => standing + axle.offset)).filter(
+    (x) => x >= -1e-6 && x <= scale.length + 1e-6,
+  );
   const xs = axles.map((x) => scale.at(x));
   return (
     <g fill="none" stroke="var(--ink)">
@@ -135,14 +137,14 @@ const labelFor = (
           ? formatWithUnit(load.value, 'lineLoad', units)
           : `${formatQuantity(load.start, 'lineLoad', units)} … ${formatWithUnit(load.end, 'lineLoad', units)}`;
       const end = scale.at(Math.min(scale.length, Math.max(load.from, load.to)));
-      return { x: end - 2, y: raised - COMB - 4, text: `${shown.caseId} ${text}`, anchor: 'end' };
+      return { x: end - 2, y: raised - COMB - 3, text: `${shown.caseId} ${text}`, anchor: 'end' };
     }
     case 'point': {
       const x = scale.at(load.x);
       const text = `${shown.caseId} ${formatWithUnit(load.value, 'force', units)}`;
       return x > scale.right - 80
-        ? { x: x - 7, y: base - 36, text, anchor: 'end' }
-        : { x: x + 7, y: base - 36, text, anchor: 'start' };
+        ? { x: x - 7, y: base - 44, text, anchor: 'end' }
+        : { x: x + 7, y: base - 44, text, anchor: 'start' };
     }
     case 'couple': {
       const x = scale.at(load.x);
@@ -165,6 +167,26 @@ const labelFor = (
   }
 };
 
+/** A label on a patch of sheet, so that no comb runs through it. */
+function Written({ label }: { label: WantedLabel }) {
+  const [from, to] = labelSpan(label);
+  return (
+    <g>
+      <rect
+        x={from - 2}
+        y={label.y - 10}
+        width={to - from + 4}
+        height={13}
+        fill="var(--sheet)"
+        fillOpacity={0.92}
+      />
+      <text x={label.x} y={label.y} textAnchor={label.anchor} fontSize={11} fill="var(--ink)">
+        {label.text}
+      </text>
+    </g>
+  );
+}
+
 /** Loads of every case, with where their trains stand for the interface that is looked at. */
 export function shownLoads(
   cases: readonly LoadCase[],
@@ -183,7 +205,7 @@ export function shownLoads(
   );
 }
 
-/** Where a train is drawn whose governing place is not known: its first axle a third along its travel. */
+/** Where a train is drawn while no train’s governing place is known: a third along its travel. */
 const somewhere = (load: Extract<Load, { kind: 'moving' }>, length: number): number => {
   const from = Math.max(0, Math.min(load.from, load.to));
   const to = Math.min(length, Math.max(load.from, load.to));
@@ -210,6 +232,7 @@ export function LoadMarks({
   );
   const bands = bandsFor(spreadOut.map((shown) => shown.load));
   const single = loads.filter((shown) => !isDistributed(shown.load));
+  const known = loads.some(({ standing }) => standing !== null);
   const floor = base - 4;
   const labels = withoutCollisions([
     ...single.map((shown) => labelFor(shown, scale, floor, 0, units)),
@@ -223,7 +246,7 @@ export function LoadMarks({
       {single.map(({ load, standing }, index) => {
         if (load.kind === 'point')
           return (
-            <Arrow key={index} x={scale.at(load.x)} from={base - 46} to={base - 2} up={load.value < 0} />
+            <Arrow key={index} x={scale.at(load.x)} from={base - 56} to={base - 2} up={load.value < 0} />
           );
         if (load.kind === 'couple')
           return <Couple key={index} x={scale.at(load.x)} y={base - 14} sagging={load.value > 0} />;
@@ -232,7 +255,7 @@ export function LoadMarks({
             <Train
               key={index}
               load={load}
-              standing={standing ?? somewhere(load, scale.length)}
+              standing={standing ?? (known ? null : somewhere(load, scale.length))}
               scale={scale}
               base={base}
             />
@@ -240,17 +263,7 @@ export function LoadMarks({
         return null;
       })}
       {labels.map((label) => (
-        <text
-          key={`${label.x} ${label.y} ${label.text}`}
-          x={label.x}
-          y={label.y}
-          textAnchor={label.anchor}
-          fontSize={11}
-          fill="var(--ink)"
-          className="halo"
-        >
-          {label.text}
-        </text>
+        <Written key={`${label.x} ${label.y} ${label.text}`} label={label} />
       ))}
     </g>
   );

@@ -5,7 +5,7 @@ import { classes } from '@/lib/classes';
 export function controlClass(invalid: boolean): string {
   return classes(
     'bg-sheet min-h-9 w-full rounded border px-2.5 pointer-coarse:min-h-11 pointer-coarse:text-[16px]',
-    'read-only:bg-paper read-only:border-line disabled:bg-paper disabled:border-line disabled:text-ink disabled:opacity-100',
+    '[&[readonly]]:border-line [&[readonly]]:bg-paper disabled:border-line disabled:bg-paper disabled:text-ink disabled:opacity-100',
     invalid ? 'border-crayon text-crayon outline-crayon border-[1.5px]' : 'border-ink2',
   );
 }

@@ -20,18 +20,11 @@ export function Table({
   );
 }
 
+const headClass = 'border-line2 text-small text-ink2 border-b text-left font-medium';
+
 /** A column's head: small, in secondary ink. */
 export function HeadCell({ className, ...rest }: ComponentProps<'th'>) {
-  return (
-    <th
-      scope="col"
-      className={classes(
-        'border-line2 text-small text-ink2 border-b px-2.5 py-2.5 text-left font-medium',
-        className,
-      )}
-      {...rest}
-    />
-  );
+  return <th scope="col" className={classes(headClass, 'px-2.5 py-2.5', className)} {...rest} />;
 }
 
 /** A cell; figures are given `text-right`. */
@@ -52,7 +45,7 @@ export function SortHead({
   className?: string;
 }) {
   return (
-    <HeadCell aria-sort={direction ?? undefined} className={classes('p-0', className)}>
+    <th scope="col" aria-sort={direction ?? undefined} className={classes(headClass, className)}>
       <button
         type="button"
         onClick={onSort}
@@ -63,6 +56,6 @@ export function SortHead({
           {direction === 'ascending' ? '↑' : direction === 'descending' ? '↓' : ''}
         </span>
       </button>
-    </HeadCell>
+    </th>
   );
 }

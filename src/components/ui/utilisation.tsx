@@ -33,14 +33,20 @@ function UtilisationBar({ value }: { value: number }) {
   );
 }
 
+/** 0.997 must not read as 1.00, nor 1.0004. */
+const decimalsFor = (value: number): number => {
+  if (Math.abs(value - 1) < 1e-9) return 2;
+  for (const decimals of [2, 3]) if (Number(value.toFixed(decimals)) !== 1) return decimals;
+  return 4;
+};
+
 /** Demand over capacity: the number, then its bar. */
 export function Utilisation({ value, bar = true }: { value: number; bar?: boolean }) {
   const over = value > 1 + 1e-9;
-  // 1.0004 must not read as 1.00
-  const text = over && value < 1.005 ? formatNumber(value, 4) : formatNumber(value, 2);
+  const text = formatNumber(value, decimalsFor(value));
   return (
     <span className="inline-flex items-center gap-2">
-      <span className={classes('min-w-8 text-right', over && 'text-crayon font-semibold')}>{text}</span>
+      <span className={classes('min-w-11 text-right', over && 'text-crayon font-semibold')}>{text}</span>
       {bar && <UtilisationBar value={value} />}
     </span>
   );

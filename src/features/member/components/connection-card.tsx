@@ -35,7 +35,9 @@ function Fold({ title, path, children }: { title: string; path: string; children
   const { document, save } = useEditor();
   const [open, setOpen] = useState(() => {
     const value = valueAt(document, path);
-    return typeof value === 'object' && value !== null && Object.keys(value).length > 0;
+    return (
+      typeof value === 'object' && value !== null && Object.values(value).some((one) => one !== undefined)
+    );
   });
   const id = useId();
   const wrong = save.answer.issues.some((issue) => issue.path.startsWith(`${path}.`));

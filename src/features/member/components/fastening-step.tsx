@@ -1,4 +1,4 @@
-import { formatFigures, formatWithUnit } from '@shared/units';
+import { formatWithUnit } from '@shared/units';
 import { SectionDrawing } from '@/components/drawing/section-drawing';
 import { findContacts } from '@/components/drawing/section-geometry';
 import type { Contact } from '@/components/drawing/section-geometry';
@@ -35,7 +35,7 @@ function SectionPanel({ contacts, joined }: { contacts: readonly Contact[]; join
       {section !== undefined && (
         <Settling>
           <p className="text-small text-ink2 mt-3">
-            EI = {formatFigures(section.EI / 1e9)} kN·m² · E ={' '}
+            EI = {formatWithUnit(section.EI, 'rigidity', units)} · E ={' '}
             {formatWithUnit(section.referenceModulus, 'stress', units)}
             {section.massPerLength !== null && ` · ${formatWithUnit(section.massPerLength, 'mass', units)}`}
           </p>

@@ -73,7 +73,9 @@ const useStepSays = (): { fastening: Say; schedule: Say } => {
     return { fastening: { tone: 'crayon', text: 'something to mend' }, schedule: null };
   const statuses = answer.result.interfaces.map((one) => one.status);
   if (statuses.includes('over')) return { fastening: null, schedule: { tone: 'crayon', text: 'over' } };
-  const advice = statuses.includes('advice') || answer.result.notices.length > 0;
+  // that joints are taken as rigid holds for every member, and is no news
+  const news = answer.result.notices.filter((notice) => notice.code !== 'rigid-joints');
+  const advice = statuses.includes('advice') || news.length > 0;
   return { fastening: null, schedule: advice ? { tone: 'amber', text: 'has notices' } : null };
 };
 

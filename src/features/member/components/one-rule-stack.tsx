@@ -1,6 +1,7 @@
 import { useMemo } from 'react';
 import type { PointerEvent } from 'react';
-import { formatExact, formatFigures, formatQuantity, unitOf } from '@shared/units';
+import { formatExact, formatQuantity, unitOf } from '@shared/units';
+import type { UnitSystem } from '@shared/units';
 import { xScale } from '@/components/drawing/curve';
 import { Elevation } from '@/components/drawing/elevation';
 import { elevationScale } from '@/components/drawing/elevation-geometry';
@@ -60,9 +61,11 @@ function PanelName({
       <text x={0} y={y} fontSize={12} fontWeight={600} fill="var(--ink)">
         {name}
       </text>
-      <text x={0} y={y + 15} fontSize={11} fill="var(--ink2)">
-        {unit}
-      </text>
+      {unit.split('\n').map((line, index) => (
+        <text key={line} x={0} y={y + 15 + 13 * index} fontSize={11} fill="var(--ink2)">
+          {line}
+        </text>
+      ))}
     </g>
   );
 }
@@ -139,7 +142,7 @@ export function OneRuleStack({
   const rows = layOut(narrow);
 
   const scale = useMemo(
-    () => (width === 0 ? null : xScale(length, narrow ? 10 : GUTTER, width - (narrow ? 10 : 8))),
+    () => (width === 0 ? null : xScale(length, narrow ? 10 : GUTTER, width - (narrow ? 10 : 14))),
     [width, narrow, length],
   );
   const tape = useMemo(() => tapeTicks(length, scale?.factor ?? 1, units), [length, scale, units]);
@@ -223,19 +226,19 @@ export function OneRuleStack({
             right={scale.right}
           />
           <LoadMarks loads={loads} scale={scale} base={heights.top} units={units} />
-          <SupportMarks
-            supports={document.supports}
-            hinges={document.hinges}
-            scale={scale}
-            top={heights.top}
-            bottom={heights.bottom}
-          />
           <Elevation
             pieces={pieces}
             fasteners={fasteners}
             chosen={joint?.outcome.id ?? null}
             scale={scale}
             heights={heights}
+          />
+          <SupportMarks
+            supports={document.supports}
+            hinges={document.hinges}
+            scale={scale}
+            top={heights.top}
+            bottom={heights.bottom}
           />
           <PanelName
             name="Shear V"
@@ -284,8 +287,8 @@ export function OneRuleStack({
               {!narrow && (
                 <PanelName
                   name="Zones"
-                  unit={zoneUnits(joint)}
-                  y={rows.zones + 18}
+                  unit={zoneUnits(joint, units)}
+                  y={rows.zones + 13}
                   narrow={false}
                   right={0}
                 />
@@ -314,10 +317,10 @@ export function OneRuleStack({
   );
 }
 
-const zoneUnits = ({ outcome, connection }: Joint): string => {
+const zoneUnits = ({ outcome, connection }: Joint, units: UnitSystem): string => {
   if (outcome.kind !== 'fasteners') return outcome.kind === 'adhesive' ? 'glued' : 'a line';
   const { diameter, length } = connection.fastener ?? {};
   const rows = outcome.rows === 1 ? '1 row' : `${outcome.rows} rows`;
   if (diameter === undefined || length === undefined) return rows;
-  return `${rows}, ${formatFigures(diameter)} × ${formatFigures(length)}`;
+  return `${rows}\n${formatQuantity(diameter, 'size', units)} × ${formatQuantity(length, 'size', units)}`;
 };

@@ -1,5 +1,6 @@
 import { useId } from 'react';
-import { formatWithUnit } from '@shared/units';
+import { formatQuantity } from '@shared/units';
+import type { UnitSystem } from '@shared/units';
 import { rulesSchema } from '@shared/schemas/member';
 import { FieldFrame, controlClass } from '@/components/ui/field-frame';
 import { useUnits } from '@/lib/units';
@@ -18,6 +19,9 @@ const fields = [
   { key: 'minZoneLength', label: 'Shortest zone', measure: 'size' },
 ] as const;
 
+const write = (value: number, measure: 'size' | 'number', units: UnitSystem): string =>
+  measure === 'number' ? String(value) : formatQuantity(value, measure, units);
+
 const gridClass = 'grid grid-cols-2 gap-x-4 gap-y-3 sm:grid-cols-3';
 
 /** The member's rules for every joint that has none of its own. */
@@ -32,9 +36,7 @@ export function MemberRules() {
             path={`rules.${key}`}
             label={label}
             measure={measure}
-            placeholder={
-              measure === 'number' ? String(usual[key]) : formatWithUnit(usual[key], measure, units)
-            }
+            placeholder={`usually ${write(usual[key], measure, units)}`}
           />
         ))}
       </div>
@@ -80,7 +82,7 @@ export function ConnectionRules({ path }: { path: string }) {
             path={`${path}.${key}`}
             label={label}
             measure={measure}
-            placeholder={measure === 'number' ? String(inherited) : formatWithUnit(inherited, measure, units)}
+            placeholder={`member’s ${write(inherited, measure, units)}`}
           />
         );
       })}

@@ -35,6 +35,17 @@ export function ToBring({ worked, joint }: { worked: Worked; joint: Joint | null
   );
 }
 
+/** A message whose first sentence says what is the matter, and the rest what to do. */
+function FirstSentence({ text }: { text: string }) {
+  const end = text.indexOf('. ') + 1;
+  return (
+    <p>
+      <strong className="text-crayon font-semibold">{end > 0 ? text.slice(0, end) : text}</strong>
+      {end > 0 && text.slice(end)}
+    </p>
+  );
+}
+
 const isOver = (code: string): boolean => code === 'no-schedule' || code === 'pitch-below-bead';
 
 /** What the calculation wants one to know; where no schedule exists, what would help and by how much. */
@@ -47,10 +58,7 @@ export function Notices({ worked }: { worked: Worked }) {
     <>
       {grave.map((notice) => (
         <Message key={`${notice.code} ${notice.interface ?? ''}`} tone="crayon">
-          <p className="text-crayon font-semibold">
-            {notice.code === 'no-schedule' ? 'No schedule is possible' : 'The runs overlap'}
-          </p>
-          <p>{notice.message}</p>
+          <FirstSentence text={notice.message} />
         </Message>
       ))}
       {others.length > 0 && (

@@ -3,6 +3,7 @@ import type { Quantity, UnitSystem } from '@shared/units';
 import type { Load } from '@shared/schemas/member';
 import type { ReactNode } from 'react';
 import { Cell, HeadCell } from '@/components/ui/table';
+import { classes } from '@/lib/classes';
 import { useUnits } from '@/lib/units';
 import { eventsAlong } from '../model/cursor';
 import { carriedSteps } from '../model/worked';
@@ -21,12 +22,12 @@ function Scrolled({ title, children }: { title: string; children: ReactNode }) {
   );
 }
 
-function Head({ names }: { names: readonly string[] }) {
+function Head({ names, words = 0 }: { names: readonly string[]; words?: number }) {
   return (
     <thead>
       <tr>
-        {names.map((name) => (
-          <HeadCell key={name} className="bg-sheet sticky top-0 text-right">
+        {names.map((name, index) => (
+          <HeadCell key={name} className={classes('bg-sheet sticky top-0', index >= words && 'text-right')}>
             {name}
           </HeadCell>
         ))}
@@ -60,12 +61,12 @@ function LoadsTable({ worked }: { worked: Worked }) {
   const { supports, loadCases } = worked.document;
   return (
     <Scrolled title="Supports and loads">
-      <Head names={['What', 'Kind', 'Where', 'Size']} />
+      <Head names={['What', 'Kind', 'Where', 'Size']} words={2} />
       <tbody>
         {supports.map((support) => (
           <tr key={support.id}>
-            <Cell className="text-right">Support {support.id}</Cell>
-            <Cell className="text-right">{support.kind}</Cell>
+            <Cell>Support {support.id}</Cell>
+            <Cell>{support.kind}</Cell>
             <Cell className="text-right">{formatQuantity(support.x, 'length', units)}</Cell>
             <Cell />
           </tr>
@@ -73,8 +74,8 @@ function LoadsTable({ worked }: { worked: Worked }) {
         {loadCases.flatMap((one) =>
           one.loads.map((load, index) => (
             <tr key={`${one.id} ${index}`}>
-              <Cell className="text-right">{one.name === '' ? one.id : `${one.id} ${one.name}`}</Cell>
-              <Cell className="text-right">{load.kind}</Cell>
+              <Cell>{one.name === '' ? one.id : `${one.id} ${one.name}`}</Cell>
+              <Cell>{load.kind}</Cell>
               <Cell className="text-right">{placeOf(load, units)}</Cell>
               <Cell className="text-right">{sizeOf(load, units)}</Cell>
             </tr>
@@ -109,7 +110,12 @@ function StationTable({
   const isEvent = (station: number) => events.some((event) => Math.abs(event - station) < 1e-6);
   return (
     <Scrolled title={title}>
-      <Head names={['x', ...columns.map((column) => `${column.name}, ${unitOf(column.quantity, units)}`)]} />
+      <Head
+        names={[
+          units === 'us' ? 'x' : 'x, mm',
+          ...columns.map((column) => `${column.name}, ${unitOf(column.quantity, units)}`),
+        ]}
+      />
       <tbody>
         {x.map((station, index) => (
           <tr key={index}>

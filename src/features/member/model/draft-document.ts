@@ -26,10 +26,14 @@ const withKey = (value: unknown, keys: readonly string[], next: unknown): unknow
     return list.map((item, index) => (index === Number(key) ? withKey(item, rest, next) : item));
   }
   const record = isRecord(value) ? value : {};
-  return { ...record, [key]: withKey(record[key], rest, next) };
+  const { [key]: before, ...others } = record;
+  const after = withKey(before, rest, next);
+  // what is emptied leaves no trace: neither a key without a value nor a group without keys
+  const gone = after === undefined || (rest.length > 0 && isRecord(after) && Object.keys(after).length === 0);
+  return gone ? others : { ...record, [key]: after };
 };
 
-/** A draft with another value at a dotted path; the draft given stays as it is. */
+/** A draft with another value at a dotted path, none for undefined; the draft given stays as it is. */
 export function withValueAt(document: DraftDocument, path: string, value: unknown): DraftDocument {
   const changed = withKey(document, path.split('.'), value);
   return isRecord(changed) ? changed : document;

@@ -46,7 +46,7 @@ export function drawnZones({ outcome }: Joint, units: UnitSystem): DrawnZone[] {
     from,
     to,
     spacing: formatQuantity(spacing, 'size', units),
-    count: outcome.rows === 1 ? String(perRow) : `${outcome.rows} × ${perRow}`,
+    count: `${outcome.rows} × ${perRow}`,
     over: utilisation > 1 + 1e-9,
   }));
 }

@@ -16,7 +16,7 @@ import type { Member } from '@shared/schemas/api';
 import { memberDocumentSchema } from '@shared/schemas/member';
 import { queryKeys } from '@/lib/query-client';
 import { fetchCurrentMember, saveDraft } from '../api/member';
-import { sameJson } from './draft-document';
+import { sameJson, withValueAt } from './draft-document';
 import type { DraftDocument } from './draft-document';
 import { DraftSaver } from './draft-saver';
 import type { SaverSnapshot } from './draft-saver';
@@ -122,7 +122,7 @@ export function useMemberEditor(member: Member): Editor {
       set: (path, value) => {
         form.setValue(path, value, { shouldDirty: true });
         void form.trigger();
-        const next = structuredClone(form.getValues());
+        const next = withValueAt(document, path, value);
         setHistory(remember(history, document, path, Date.now()));
         setDocument(next);
         saver.change(next);
