@@ -106,7 +106,7 @@ const tokens = (text: string, units: UnitTable): Token[] => {
     const first = rest.charAt(0);
     const operator = /^x(?=[\s\d(.])/i.test(rest) ? '*' : first;
     if (!isOperator(operator))
-      throw new Unreadable(`“${(/^\S+/.exec(rest)?.[0] ?? rest).slice(0, 20)}” is not understood`);
+      throw new Unreadable(`“${rest.slice(0, 24)}” is not understood`);
     out.push({ kind: 'operator', text: operator });
     rest = rest.slice(1).trimStart();
   }
