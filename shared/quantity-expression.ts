@@ -105,8 +105,7 @@ const tokens = (text: string, units: UnitTable): Token[] => {
     }
     const first = rest.charAt(0);
     const operator = /^x(?=[\s\d(.])/i.test(rest) ? '*' : first;
-    if (!isOperator(operator))
-      throw new Unreadable(`“${rest.slice(0, 24)}” is not understood`);
+    if (!isOperator(operator)) throw new Unreadable(`“${rest.slice(0, 24)}” is not understood`);
     out.push({ kind: 'operator', text: operator });
     rest = rest.slice(1).trimStart();
   }

@@ -4,41 +4,60 @@ import type { SectionScale } from './section-drawing';
 
 const SLASH = 4;
 
-/** The overall width, above the section. */
+/** The width above the section: overall, or ply by ply where all pieces stand side by side. */
 export function WidthDimension({
+  pieces,
   scale,
-  label,
+  write,
   raised,
 }: {
+  pieces: readonly DrawnPiece[];
   scale: SectionScale;
-  label: string;
+  write: (mm: number) => string;
   raised: boolean;
 }) {
+  const [first] = pieces;
+  const plies = pieces.every((piece) => piece.z === first?.z && piece.depth === first.depth);
+  const edges = dimensionStops(
+    pieces.flatMap((piece) => [piece.y, piece.y + piece.width]),
+    0.05,
+  );
+  const stops = plies ? edges : [edges[0] ?? 0, edges.at(-1) ?? 0];
   const y = scale.top - (raised ? 46 : 22);
-  const middle = (scale.left + scale.right) / 2;
-  const half = label.length * 3.4 + 4;
-  const fits = scale.right - scale.left > 2 * half + 12;
+  const spans = stops.slice(1).map((to, index) => ({ from: stops[index] ?? to, to }));
   return (
     <g stroke="var(--ink2)" fill="none">
-      {fits ? (
-        <path d={`M${scale.left} ${y}H${middle - half}M${middle + half} ${y}H${scale.right}`} />
-      ) : (
-        <path d={`M${scale.left} ${y}H${scale.right}`} />
-      )}
-      {[scale.left, scale.right].map((x) => (
-        <path key={x} d={`M${x - SLASH} ${y + SLASH}L${x + SLASH} ${y - SLASH}`} />
+      {stops.map((stop) => (
+        <path key={stop} d={`M${scale.x(stop) - SLASH} ${y + SLASH}L${scale.x(stop) + SLASH} ${y - SLASH}`} />
       ))}
-      <text
-        x={middle}
-        y={fits ? y : y - 9}
-        dy="0.35em"
-        textAnchor="middle"
-        fontSize={11}
-        stroke="none"
-        fill="var(--ink2)"
-      >
-        {label}
-      </text>
+      {spans.map(({ from, to }) => {
+        const label = write(to - from);
+        const middle = (scale.x(from) + scale.x(to)) / 2;
+        const half = label.length * 3.4 + 4;
+        const wide = (to - from) * scale.factor;
+        const inLine = wide > 2 * half + 12;
+        const line = inLine
+          ? `M${scale.x(from)} ${y}H${middle - half}M${middle + half} ${y}H${scale.x(to)}`
+          : `M${scale.x(from)} ${y}H${scale.x(to)}`;
+        return (
+          <g key={to}>
+            <path d={line} />
+            {(inLine || wide > 2 * half - 8) && (
+              <text
+                x={middle}
+                y={inLine ? y : y - 9}
+                dy="0.35em"
+                textAnchor="middle"
+                fontSize={11}
+                stroke="none"
+                fill="var(--ink2)"
+              >
+                {label}
+              </text>
+            )}
+          </g>
+        );
+      })}
     </g>
   );
 }

@@ -210,11 +210,7 @@ export function SectionDrawing({
               fill={colours.get(piece.id) === 1 ? 'var(--timber2)' : 'var(--timber)'}
             />
           ))}
-          <WidthDimension
-            scale={scale}
-            label={size((scale.right - scale.left) / scale.factor)}
-            raised={above.length > 0}
-          />
+          <WidthDimension pieces={pieces} scale={scale} write={size} raised={above.length > 0} />
           <DepthChain pieces={pieces} scale={scale} write={size} />
           {centroid !== null && (
             <NeutralAxis centroid={centroid} scale={scale} label={`z̄ ${size(centroid)}`} />

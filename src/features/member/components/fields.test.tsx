@@ -57,7 +57,7 @@ beforeEach(() => {
   vi.stubGlobal(
     'fetch',
     vi.fn((_path: string, init: RequestInit) => {
-      const { document } = JSON.parse(String(init.body));
+      const { document } = JSON.parse(typeof init.body === 'string' ? init.body : '{}');
       sent.push(document);
       const { result, refusal, issues, saved } = member();
       return Promise.resolve(

@@ -77,7 +77,7 @@ export function Readout({ worked, joint, x }: { worked: Worked; joint: Joint | n
     <Panel label="At x">
       <p className="text-small text-ink2">At x</p>
       <p className="text-figure mb-1 font-semibold">{formatWithUnit(x, 'length', units)}</p>
-      <dl className="sm:max-lg:grid sm:max-lg:grid-cols-2 sm:max-lg:gap-x-6">
+      <dl className="sm:max-md:grid sm:max-md:grid-cols-2 sm:max-md:gap-x-6">
         {rows.map(({ name, value }) => (
           <div
             key={name}

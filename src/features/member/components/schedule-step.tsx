@@ -107,7 +107,7 @@ function WorkedSchedule({ worked }: { worked: Worked }) {
           )}
         </Settling>
       </Panel>
-      <div className="grid content-start gap-4">
+      <div className="grid content-start gap-4 md:max-lg:grid-cols-2">
         <Settling>
           <Readout worked={worked} joint={joint} x={x} />
         </Settling>

@@ -12,7 +12,7 @@ import type { Joint, Worked } from '../model/worked';
 function Scrolled({ title, children }: { title: string; children: ReactNode }) {
   return (
     <section aria-label={title} className="mt-4 first:mt-0">
-      <h3 className="mb-1 font-semibold">{title}</h3>
+      <h2 className="mb-1 font-semibold">{title}</h2>
       <div className="border-line max-h-72 overflow-auto rounded border">
         <table className="w-full border-collapse" aria-label={title}>
           {children}
@@ -56,7 +56,7 @@ const sizeOf = (load: Load, units: UnitSystem): string => {
   }
 };
 
-function LoadsTable({ worked }: { worked: Worked }) {
+function LoadsTable({ worked, onMove }: { worked: Worked; onMove: (x: number) => void }) {
   const units = useUnits();
   const { supports, loadCases } = worked.document;
   return (
@@ -67,7 +67,9 @@ function LoadsTable({ worked }: { worked: Worked }) {
           <tr key={support.id}>
             <Cell>Support {support.id}</Cell>
             <Cell>{support.kind}</Cell>
-            <Cell className="text-right">{formatQuantity(support.x, 'length', units)}</Cell>
+            <Cell className="text-right">
+              <GoTo x={support.x} onMove={onMove} />
+            </Cell>
             <Cell />
           </tr>
         ))}
@@ -83,6 +85,20 @@ function LoadsTable({ worked }: { worked: Worked }) {
         )}
       </tbody>
     </Scrolled>
+  );
+}
+
+/** A place in a table that takes the cursor there. */
+function GoTo({ x, onMove }: { x: number; onMove: (x: number) => void }) {
+  const units = useUnits();
+  return (
+    <button
+      type="button"
+      className="text-spruce min-h-6 min-w-6 font-medium underline underline-offset-2"
+      onClick={() => onMove(x)}
+    >
+      {formatQuantity(x, 'length', units)}
+    </button>
   );
 }
 
@@ -121,13 +137,7 @@ function StationTable({
           <tr key={index}>
             <Cell className="py-1 text-right">
               {isEvent(station) ? (
-                <button
-                  type="button"
-                  className="text-spruce min-h-6 font-medium underline underline-offset-2"
-                  onClick={() => onMove(station)}
-                >
-                  {formatQuantity(station, 'length', units)}
-                </button>
+                <GoTo x={station} onMove={onMove} />
               ) : (
                 formatQuantity(station, 'length', units)
               )}
@@ -163,7 +173,7 @@ export function StackTables({
   );
   return (
     <>
-      <LoadsTable worked={worked} />
+      <LoadsTable worked={worked} onMove={onMove} />
       <StationTable
         title="Shear V"
         {...common}

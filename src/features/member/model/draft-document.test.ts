@@ -108,7 +108,7 @@ describe('the way back', () => {
 describe('words', () => {
   it('names a place by what stands there', () => {
     expect(wordsForPath(document, 'connections.0.capacity.value')).toBe(
-      'connections lower–upper · capacity · value',
+      'connection lower–upper · capacity · value',
     );
     expect(wordsForPath({ pieces: [{ id: 'P1' }] }, 'pieces.0.z')).toBe('pieces P1 · z');
     expect(wordsForPath(document, '')).toBe('the document');

@@ -2,7 +2,7 @@ import { valueAt } from './draft-document';
 import type { DraftDocument } from './draft-document';
 
 const names: Record<string, string> = {
-  connections: 'connections',
+  connections: 'connection',
   capacity: 'capacity',
   value: 'value',
   values: 'test values',
@@ -48,7 +48,7 @@ const itemName = (document: DraftDocument, path: string, index: number): string 
   return typeof a === 'string' && typeof b === 'string' ? `${a}–${b}` : String(index + 1);
 };
 
-/** A dotted path in words that stand on the screen: "connections lower–upper · capacity · value". */
+/** A dotted path in words that stand on the screen: "connection lower–upper · capacity · value". */
 export function wordsForPath(document: DraftDocument, path: string): string {
   if (path === '') return 'the document';
   const parts: string[] = [];

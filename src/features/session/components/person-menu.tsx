@@ -18,8 +18,8 @@ const themes: readonly { value: Theme; label: string }[] = [
 ];
 
 const unitChoices = [
-  { value: 'metric', label: 'mm', name: 'Millimetres and newtons' },
-  { value: 'us', label: 'ft-in', name: 'Feet, inches and pounds' },
+  { value: 'metric', label: 'mm', name: 'mm, millimetres and newtons' },
+  { value: 'us', label: 'ft-in', name: 'ft-in, feet, inches and pounds' },
 ] as const;
 
 /** Switches the units in which everything is read and typed. */
@@ -42,7 +42,7 @@ export function PersonMenu({ person }: { person: Person }) {
   const signOut = useSignOut();
   return (
     <Popover
-      label={`${person.name}: theme, units, sign out`}
+      label={`${initials(person.name)}, ${person.name}: theme, units, sign out`}
       trigger={initials(person.name)}
       triggerClass="border-line2 text-small hover:border-ink2 flex size-8 items-center justify-center rounded-full border font-semibold pointer-coarse:size-11"
     >
