@@ -7,8 +7,7 @@ import { Refused } from './refused';
 
 /** What became of a document: calculated, with its defaults filled in; or refused, with the fields to mend. */
 export type Outcome =
-  | { ok: true; document: MemberDocument; result: CalculationResult }
-  | { ok: false; refusal: Refusal };
+  { ok: true; document: MemberDocument; result: CalculationResult } | { ok: false; refusal: Refusal };
 
 /** Parses and calculates a member document. Never throws for anything that a document can hold. */
 export function calculateMember(input: unknown): Outcome {

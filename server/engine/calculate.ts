@@ -39,10 +39,25 @@ export function calculate(document: MemberDocument, found: readonly Notice[] = [
     const demand = demands[j];
     if (!own.item.connection || !demand) return [];
     const capacity = workOutCapacity(own.item.connection);
-    return [{ own, demand, capacity, schedule: scheduleInterface(document, own.item, demand, capacity.value, nothing) }];
+    return [
+      {
+        own,
+        demand,
+        capacity,
+        schedule: scheduleInterface(document, own.item, demand, capacity.value, nothing),
+      },
+    ];
   });
 
-  const { lines, capacityLines } = calculationLines({ document, section, flow, sideways, beam, envelope, worked });
+  const { lines, capacityLines } = calculationLines({
+    document,
+    section,
+    flow,
+    sideways,
+    beam,
+    envelope,
+    worked,
+  });
   return {
     schema: 1,
     engine: engineVersion,
@@ -85,7 +100,12 @@ export function calculate(document: MemberDocument, found: readonly Notice[] = [
         capacity: capacity.value,
         capacityLines: capacityLines.get(own.item.id) ?? [],
         peakFlow: {
-          ...placeOf(beam, { value: peak.value, x: peak.x, combination: peakCombination, positions: peak.positions }),
+          ...placeOf(beam, {
+            value: peak.value,
+            x: peak.x,
+            combination: peakCombination,
+            positions: peak.positions,
+          }),
           along: peak.along,
           across: peak.across,
         },

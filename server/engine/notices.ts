@@ -76,11 +76,13 @@ function slipNotices(document: MemberDocument, flow: SectionFlow, beam: Beam): N
   if (joined.length === 0) return notices;
   const reasons: string[] = [];
   if (kinds.size > 1) reasons.push('joints of unlike stiffness');
-  if (flow.interfaces.some((i) => i.item.connection && i.side === null)) reasons.push('joints that close a loop');
+  if (flow.interfaces.some((i) => i.item.connection && i.side === null))
+    reasons.push('joints that close a loop');
   if (document.loadCases.some((c) => c.loads.some((l) => l.kind === 'couple'))) reasons.push('a couple');
   if (document.supports.some((s) => s.kind === 'fixed')) reasons.push('a fixed support');
   const reactions = document.supports.reduce((sum, s) => sum + (s.kind === 'fixed' ? 2 : 1), 0);
-  if (reactions - 2 - beam.system.nodes.filter((n) => n.hinge).length > 0) reasons.push('supports that share the load by stiffness');
+  if (reactions - 2 - beam.system.nodes.filter((n) => n.hinge).length > 0)
+    reasons.push('supports that share the load by stiffness');
   if (reasons.length > 0 && kinds.has('fasteners')) {
     notices.push({
       code: 'slip-matters',
@@ -110,7 +112,11 @@ function loadNotices(document: MemberDocument, sideways: Sideways): Notice[] {
       };
       const last = order[order.length - 1]?.offset ?? 0;
       const turned = signature(order.map((a) => ({ offset: last - a.offset, value: a.value })).reverse());
-      if (signature(order) === turned || trains.some((other) => signature([...other.axles].sort((a, b) => a.offset - b.offset)) === turned)) return;
+      if (
+        signature(order) === turned ||
+        trains.some((other) => signature([...other.axles].sort((a, b) => a.offset - b.offset)) === turned)
+      )
+        return;
       notices.push({
         code: 'one-way-train',
         message: `The train of ${train.axles.length} axles in ${loadCase.id} runs one way round only. If it can also come the other way round, enter it a second time with its axles turned, in a load case of its own.`,
@@ -118,7 +124,9 @@ function loadNotices(document: MemberDocument, sideways: Sideways): Notice[] {
     });
   });
   const factored = document.combinations.filter((c) => Object.values(c.factors).some((f) => f > 1));
-  const safe = document.connections.filter(({ capacity }) => capacity.basis !== 'nds' && capacity.basis !== 'ec5');
+  const safe = document.connections.filter(
+    ({ capacity }) => capacity.basis !== 'nds' && capacity.basis !== 'ec5',
+  );
   const [first] = factored;
   if (first && safe.length > 0) {
     notices.push({
@@ -126,7 +134,9 @@ function loadNotices(document: MemberDocument, sideways: Sideways): Notice[] {
       message: `Combination ${first.id} has a factor over 1, while the capacities are allowable values or hold a factor of safety: these go with loads that are not factored. The result is on the safe side, but mixes two methods.`,
     });
   }
-  const heavy = document.loadCases.some((c) => c.loads.some((l) => (l.kind === 'point' || l.kind === 'moving') && l.on !== undefined));
+  const heavy = document.loadCases.some((c) =>
+    c.loads.some((l) => (l.kind === 'point' || l.kind === 'moving') && l.on !== undefined),
+  );
   if (sideways.stacks > 1 && heavy) {
     notices.push({
       code: 'splitting',
@@ -157,9 +167,14 @@ function connectionNotices(section: Section, interfaces: readonly Interface[]): 
     const length = connection.fastener?.length;
     const first = section.pieces[a]?.piece;
     const second = section.pieces[b]?.piece;
-    if (connection.kind === 'fasteners' && connection.fastener?.type !== 'bolt' && length !== undefined && first && second) {
-      const through =
-        orientation === 'horizontal' ? first.depth + second.depth : first.width + second.width;
+    if (
+      connection.kind === 'fasteners' &&
+      connection.fastener?.type !== 'bolt' &&
+      length !== undefined &&
+      first &&
+      second
+    ) {
+      const through = orientation === 'horizontal' ? first.depth + second.depth : first.width + second.width;
       if (length > through + 1e-6) {
         notices.push({
           code: 'fastener-through',

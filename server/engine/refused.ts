@@ -12,9 +12,14 @@ export class Refused extends Error {
     super(cut(message));
     this.name = 'Refused';
     this.code = code;
-    this.issues = issues.slice(0, mostIssues).map((issue) => ({ path: cut(issue.path), message: cut(issue.message) }));
+    this.issues = issues
+      .slice(0, mostIssues)
+      .map((issue) => ({ path: cut(issue.path), message: cut(issue.message) }));
     if (issues.length > mostIssues) {
-      this.issues.push({ path: '', message: `There are ${issues.length - mostIssues} more; mend these first.` });
+      this.issues.push({
+        path: '',
+        message: `There are ${issues.length - mostIssues} more; mend these first.`,
+      });
     }
   }
 

@@ -52,8 +52,19 @@ export type SignIn = z.infer<typeof signInSchema>;
 export const sessionSchema = z.object({ person: personSchema.nullable() }).meta({ id: 'Session' });
 export type Session = z.infer<typeof sessionSchema>;
 
+/** A new password: long rather than complicated. */
+export const newPasswordSchema = z
+  .string({ error: 'The new password is missing' })
+  .min(12, { error: 'Use 12 characters or more' })
+  .max(128, { error: 'Use 128 characters at most' });
+
 export const changeMeSchema = z
-  .object({ units: unitSystemSchema, theme: themeSchema })
+  .object({
+    name: z.string().trim().min(1, { error: 'Enter your name' }).max(200),
+    units: unitSystemSchema,
+    theme: themeSchema,
+    password: z.object({ old: z.string().max(1024), new: newPasswordSchema }),
+  })
   .partial()
   .meta({ id: 'ChangeMe' });
 export type ChangeMe = z.infer<typeof changeMeSchema>;

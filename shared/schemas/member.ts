@@ -52,7 +52,9 @@ const identifier = (what: string) => text(what).min(1, { error: `${what} must no
 
 const list = <T extends z.ZodType>(item: T, what: string, most: number) =>
   z
-    .array(item, { error: (issue) => (issue.input === undefined ? `${what} are missing` : `${what} must be a list`) })
+    .array(item, {
+      error: (issue) => (issue.input === undefined ? `${what} are missing` : `${what} must be a list`),
+    })
     .max(most, { error: `${what}: at most ${most} are allowed` });
 
 const choice = <const T extends readonly [string, ...string[]]>(what: string, options: T) =>
@@ -87,7 +89,9 @@ export const pieceSchema = z.object({
   depth: positive('The depth'),
 });
 
-const factorOfSafety = number('The factor of safety').gte(1, { error: 'The factor of safety must be 1 or more' });
+const factorOfSafety = number('The factor of safety').gte(1, {
+  error: 'The factor of safety must be 1 or more',
+});
 
 export const capacitySchema = z.discriminatedUnion(
   'basis',
@@ -168,7 +172,9 @@ export const connectionSchema = z.object({
   /** mm, of a continuous line: the length of each run; the spacing is then the pitch */
   bead: positive('The bead').optional(),
   rules: z.object(ruleFields).partial().optional(),
-  zones: list(zoneSchema, 'The zones', documentLimits.zones).min(1, { error: 'Pinned zones must not be empty' }).optional(),
+  zones: list(zoneSchema, 'The zones', documentLimits.zones)
+    .min(1, { error: 'Pinned zones must not be empty' })
+    .optional(),
 });
 
 const on = { on: identifier('on').optional() };
@@ -218,17 +224,25 @@ export const loadCaseSchema = z.object({
 export const combinationSchema = z.object({
   id: identifier('The combination’s id'),
   name: text('The combination’s name').default(''),
-  factors: z.record(z.string(), number('The factor'), { error: 'factors are needed: one for each load case' }),
-  duration: choice('duration', ['permanent', 'long-term', 'medium-term', 'short-term', 'instantaneous']).default(
+  factors: z.record(z.string(), number('The factor'), {
+    error: 'factors are needed: one for each load case',
+  }),
+  duration: choice('duration', [
+    'permanent',
     'long-term',
-  ),
+    'medium-term',
+    'short-term',
+    'instantaneous',
+  ]).default('long-term'),
 });
 
 export const memberDocumentSchema = z
   .object({
     schema: z.literal(1, { error: 'schema must be 1' }),
     title: text('The title').default(''),
-    length: number('The length').gte(1, { error: 'The length must be 1 mm or more' }).lte(1e7, { error: 'The length may be 10 000 000 mm at most' }),
+    length: number('The length')
+      .gte(1, { error: 'The length must be 1 mm or more' })
+      .lte(1e7, { error: 'The length may be 10 000 000 mm at most' }),
     supports: list(supportSchema, 'The supports', documentLimits.supports).min(1, {
       error: 'The beam has no support: add two pins or rollers, or a fixed end',
     }),
@@ -236,7 +250,9 @@ export const memberDocumentSchema = z
     materials: list(materialSchema, 'The materials', documentLimits.materials).min(1, {
       error: 'At least one material is needed',
     }),
-    pieces: list(pieceSchema, 'The pieces', documentLimits.pieces).min(1, { error: 'At least one piece is needed' }),
+    pieces: list(pieceSchema, 'The pieces', documentLimits.pieces).min(1, {
+      error: 'At least one piece is needed',
+    }),
     connections: list(connectionSchema, 'The connections', documentLimits.connections).default([]),
     loadCases: list(loadCaseSchema, 'The load cases', documentLimits.loadCases).min(1, {
       error: 'At least one load case is needed',

@@ -102,9 +102,15 @@ export function solveCase(
     const shear = -s[1] / length;
     const slope = -(s[3] - (shear * length ** 3) / 6) / length;
     starts.push({ shear, slope });
-    spanLoads.push({ shear: [shear, s[0] + shear], slope: [slope, s[2] - (shear * length ** 2) / 2 + slope] });
+    spanLoads.push({
+      shear: [shear, s[0] + shear],
+      slope: [slope, s[2] - (shear * length ** 2) / 2 + slope],
+    });
   }
-  const nodeLoads: NodeLoads[] = nodeEvent.map((i) => ({ force: loads.force[i] ?? 0, couple: loads.couple[i] ?? 0 }));
+  const nodeLoads: NodeLoads[] = nodeEvent.map((i) => ({
+    force: loads.force[i] ?? 0,
+    couple: loads.couple[i] ?? 0,
+  }));
   const state = system.solve(spanLoads, nodeLoads);
 
   const segments = events.length - 1;
@@ -136,7 +142,14 @@ export function solveCase(
     const last = nodeEvent[e + 1] ?? 0;
     for (let i = first; i < last; i++) {
       if (i > first) s = [s[0] - (loads.force[i] ?? 0), s[1] + (loads.couple[i] ?? 0), s[2], s[3]];
-      writeSegment(fields, i, s, (events[i + 1] ?? 0) - (events[i] ?? 0), loads.start[i] ?? 0, loads.change[i] ?? 0);
+      writeSegment(
+        fields,
+        i,
+        s,
+        (events[i + 1] ?? 0) - (events[i] ?? 0),
+        loads.start[i] ?? 0,
+        loads.change[i] ?? 0,
+      );
       s = carry(s, (events[i + 1] ?? 0) - (events[i] ?? 0), loads.start[i] ?? 0, loads.change[i] ?? 0);
     }
     shearLeft = s[0];

@@ -1,7 +1,15 @@
 import type { Combination, MemberDocument } from '@shared/schemas/member';
 import { peakOf, weightedSum, type Peak, type Piecewise } from '../numeric/piecewise';
 import { beamEvents, placeIndex } from './events';
-import { combineFields, gravity, massPerLength, segmentLoads, solveCase, type Fields, type SegmentLoads } from './cases';
+import {
+  combineFields,
+  gravity,
+  massPerLength,
+  segmentLoads,
+  solveCase,
+  type Fields,
+  type SegmentLoads,
+} from './cases';
 import { Influence } from './influence';
 import { shearEnvelope } from './shear-envelope';
 import { BeamSystem } from './system';
@@ -67,7 +75,9 @@ export function analyseBeam(document: MemberDocument, EI: number): Beam {
   const trainReactions: Beam['trainReactions'] = [];
   if (influence) {
     const forceLines = system.nodes.map((n, i) => (n.support ? influence.reaction(i) : null));
-    const momentLines = system.nodes.map((n, i) => (n.support?.kind === 'fixed' ? influence.supportMoment(i) : null));
+    const momentLines = system.nodes.map((n, i) =>
+      n.support?.kind === 'fixed' ? influence.supportMoment(i) : null,
+    );
     for (const { load, caseIndex, loadIndex } of moving) {
       const train = prepareTrain(load, caseIndex, loadIndex, influence);
       trains.push(train);

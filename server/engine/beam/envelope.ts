@@ -22,7 +22,10 @@ export function envelopeOf(beam: Beam, zoneGrid: number): Envelope {
       for (const v of values) most = Math.max(most, sign * (of(v)[i] ?? 0));
       return tidy(sign * most * scale);
     });
-  const governing = (max: (v: StationValues) => Float64Array, min: (v: StationValues) => Float64Array): number[] =>
+  const governing = (
+    max: (v: StationValues) => Float64Array,
+    min: (v: StationValues) => Float64Array,
+  ): number[] =>
     Array.from({ length: n }, (_, i) => {
       let best = -1;
       let most = 0;

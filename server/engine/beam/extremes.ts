@@ -55,7 +55,8 @@ export function shearPositions(
     const positions: Position[] = [];
     if (influence) {
       const node = system.nodes.findIndex((n) => Math.abs(n.x - x) < 1e-9 * beam.length);
-      const span = node < 0 ? system.spanAt(x) : Math.min(Math.max(side === 1 ? node : node - 1, 0), system.spans - 1);
+      const span =
+        node < 0 ? system.spanAt(x) : Math.min(Math.max(side === 1 ? node : node - 1, 0), system.spans - 1);
       // An axle may stand a hair either side of x: the line is split there.
       const line = influence.shear(x, span);
       for (const { train, factor } of loads.trains) {
@@ -78,7 +79,10 @@ export function shearPositions(
 
 function placeOn(events: readonly number[], x: number, side: -1 | 1): { index: number; u: number } {
   let index = 0;
-  while (index < events.length - 2 && (side === 1 ? (events[index + 1] ?? 0) <= x + 1e-9 : (events[index + 1] ?? 0) < x - 1e-9)) {
+  while (
+    index < events.length - 2 &&
+    (side === 1 ? (events[index + 1] ?? 0) <= x + 1e-9 : (events[index + 1] ?? 0) < x - 1e-9)
+  ) {
     index++;
   }
   const a = events[index] ?? 0;
@@ -96,7 +100,11 @@ interface Quantity {
 }
 
 /** The largest |M| over combinations and positions. */
-export function largestMoment(beam: Beam, stations: readonly Station[], values: readonly StationValues[]): Extreme {
+export function largestMoment(
+  beam: Beam,
+  stations: readonly Station[],
+  values: readonly StationValues[],
+): Extreme {
   return largest(beam, stations, values, {
     field: 'moment',
     count: 4,
@@ -107,7 +115,11 @@ export function largestMoment(beam: Beam, stations: readonly Station[], values: 
 }
 
 /** The largest |w| over combinations and positions. */
-export function largestDeflection(beam: Beam, stations: readonly Station[], values: readonly StationValues[]): Extreme {
+export function largestDeflection(
+  beam: Beam,
+  stations: readonly Station[],
+  values: readonly StationValues[],
+): Extreme {
   const found = largest(beam, stations, values, {
     field: 'bend',
     count: 6,
@@ -118,7 +130,12 @@ export function largestDeflection(beam: Beam, stations: readonly Station[], valu
   return { ...found, value: found.value / beam.EI };
 }
 
-function largest(beam: Beam, stations: readonly Station[], values: readonly StationValues[], q: Quantity): Extreme {
+function largest(
+  beam: Beam,
+  stations: readonly Station[],
+  values: readonly StationValues[],
+  q: Quantity,
+): Extreme {
   const best: Extreme = { value: 0, x: 0, side: 1, combination: -1, positions: [] };
   // What the stations already show bounds the search below.
   const floor = values.reduce((most, v) => Math.max(most, peak(q.max(v)), -trough(q.min(v))), 0);
@@ -129,7 +146,8 @@ function largest(beam: Beam, stations: readonly Station[], values: readonly Stat
       loads.trains.length === 0
         ? largestStill(beam, loads, q, Math.max(floor * (1 - 1e-9), Math.abs(best.value)))
         : largestMoving(beam, stations, loads, v, q, Math.max(floor * (1 - 1e-9), Math.abs(best.value)));
-    if (found && Math.abs(found.value) > Math.abs(best.value) * same) Object.assign(best, found, { combination: c });
+    if (found && Math.abs(found.value) > Math.abs(best.value) * same)
+      Object.assign(best, found, { combination: c });
   });
   return best;
 }
@@ -137,7 +155,12 @@ function largest(beam: Beam, stations: readonly Station[], values: readonly Stat
 const peak = (a: Float64Array): number => a.reduce((most, x) => Math.max(most, x), -Infinity);
 const trough = (a: Float64Array): number => a.reduce((least, x) => Math.min(least, x), Infinity);
 
-function largestStill(beam: Beam, loads: CombinedLoads, q: Quantity, floor: number): Omit<Extreme, 'combination'> | null {
+function largestStill(
+  beam: Beam,
+  loads: CombinedLoads,
+  q: Quantity,
+  floor: number,
+): Omit<Extreme, 'combination'> | null {
   const { events } = beam;
   const coefficients = loads.fields[q.field];
   let best: Omit<Extreme, 'combination'> | null = null;
@@ -186,7 +209,12 @@ function largestMoving(
       // No value in between can be more than the ends and the steepest slope allow.
       const slope =
         q.field === 'moment'
-          ? Math.max(...[i, i + 1].flatMap((k) => [Math.abs(values.shearMax[k] ?? 0), Math.abs(values.shearMin[k] ?? 0)]))
+          ? Math.max(
+              ...[i, i + 1].flatMap((k) => [
+                Math.abs(values.shearMax[k] ?? 0),
+                Math.abs(values.shearMin[k] ?? 0),
+              ]),
+            )
           : Math.max(Math.abs(fb - fa), ...neighbours(at, i)) / (b.x - a.x);
       if ((fa + fb) / 2 + (slope * (b.x - a.x)) / 2 <= size) continue;
       const near: Station = { ...a, side: 1 };
@@ -235,7 +263,13 @@ function effect(
  * side by side, then a parabola through the best three, over and over (Brent 1973, without its golden steps
  * while the parabola stays inside). The upper edge of smooth curves has smooth peaks, so this converges fast.
  */
-function peakBetween(f: (x: number) => number, a: number, b: number, fa: number, fb: number): { x: number; value: number } {
+function peakBetween(
+  f: (x: number) => number,
+  a: number,
+  b: number,
+  fa: number,
+  fb: number,
+): { x: number; value: number } {
   const h = (b - a) / 4;
   const values = [fa, f(a + h), f(a + 2 * h), f(a + 3 * h), fb];
   let best = 0;

@@ -53,8 +53,16 @@ function spanTracks(train: Train, influence: Influence, m: number, sign: 1 | -1)
     const lower: Curve[] = [];
     const upper: Curve[] = [];
     const peaks: { p: number; value: number }[] = [];
-    const leftSum = new TrainSum({ ...train, values: values.map((v, i) => (i < j ? v : 0)) }, left, influence);
-    const rightSum = new TrainSum({ ...train, values: values.map((v, i) => (i < j ? 0 : v)) }, right, influence);
+    const leftSum = new TrainSum(
+      { ...train, values: values.map((v, i) => (i < j ? v : 0)) },
+      left,
+      influence,
+    );
+    const rightSum = new TrainSum(
+      { ...train, values: values.map((v, i) => (i < j ? 0 : v)) },
+      right,
+      influence,
+    );
     let before = { value: NaN, slope: 0 };
     const cut = [first, last].filter((p) => Number.isFinite(p));
     eachStretch(
@@ -68,10 +76,14 @@ function spanTracks(train: Train, influence: Influence, m: number, sign: 1 | -1)
         const at = (p: number): { value: number; slope: number } => {
           leftSum.at(k, p, middle);
           rightSum.at(k, p, middle);
-          return { value: sign * (leftSum.value + rightSum.value), slope: sign * (leftSum.slope + rightSum.slope) };
+          return {
+            value: sign * (leftSum.value + rightSum.value),
+            slope: sign * (leftSum.slope + rightSum.slope),
+          };
         };
         const fa = at(a);
-        if (before.value !== fa.value || (before.slope >= 0 && fa.slope <= 0)) peaks.push({ p: a, value: fa.value });
+        if (before.value !== fa.value || (before.slope >= 0 && fa.slope <= 0))
+          peaks.push({ p: a, value: fa.value });
         const h = b - a;
         if (h === 0) {
           before = { value: NaN, slope: 0 };

@@ -45,7 +45,8 @@ export function stationsOf(beam: Beam, zoneGrid: number): Station[] {
   places.sort((a, b) => a.x - b.x);
   const supports = new Set(system.nodes.flatMap((n, i) => (n.support ? [beam.nodeEvent[i] ?? -1] : [])));
   const jumps = (event: number): boolean =>
-    supports.has(event) || beam.segmentLoads.some((l) => (l.force[event] ?? 0) !== 0 || (l.couple[event] ?? 0) !== 0);
+    supports.has(event) ||
+    beam.segmentLoads.some((l) => (l.force[event] ?? 0) !== 0 || (l.couple[event] ?? 0) !== 0);
   const stations: Station[] = [];
   let segment = 0;
   let span = 0;

@@ -186,7 +186,9 @@ export class BeamSystem {
       momentRight: new Float64Array(count),
     };
     for (let n = 0; n < count; n++) {
-      state.deflection[n] = this.isRigid(nodes[n] ?? { x: 0, support: null, hinge: false }) ? 0 : (x[3 * n] ?? 0) * unit * unit;
+      state.deflection[n] = this.isRigid(nodes[n] ?? { x: 0, support: null, hinge: false })
+        ? 0
+        : (x[3 * n] ?? 0) * unit * unit;
       state.momentLeft[n] = n === 0 ? 0 : (x[3 * n + 1] ?? 0);
       state.momentRight[n] = n === spans ? 0 : (x[3 * n + 2] ?? 0);
     }

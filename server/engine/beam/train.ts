@@ -27,7 +27,12 @@ export interface TrainExtremes {
 }
 
 /** Prepares a moving load for a beam. An axle beyond the beam's ends carries nothing; on an end it counts. */
-export function prepareTrain(load: MovingLoad, caseIndex: number, loadIndex: number, influence: Influence): Train {
+export function prepareTrain(
+  load: MovingLoad,
+  caseIndex: number,
+  loadIndex: number,
+  influence: Influence,
+): Train {
   const axles = mergeAxles(load);
   const { starts } = influence;
   const length = starts[starts.length - 1] ?? 0;

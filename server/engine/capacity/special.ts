@@ -44,7 +44,12 @@ export function nonCentralT(t: number, freedom: number, delta: number): number {
     const s = low + i * h;
     const simpson = i === 0 || i === steps ? 1 : i % 2 === 1 ? 4 : 2;
     // s^(ν−1)·e^(−νs²/2), scaled so that it is 1 at s = 1
-    const weight = s === 0 ? (freedom === 1 ? Math.exp(freedom / 2) : 0) : Math.exp((freedom - 1) * Math.log(s) - (freedom * (s * s - 1)) / 2);
+    const weight =
+      s === 0
+        ? freedom === 1
+          ? Math.exp(freedom / 2)
+          : 0
+        : Math.exp((freedom - 1) * Math.log(s) - (freedom * (s * s - 1)) / 2);
     weightSum += simpson * weight;
     sum += simpson * weight * normalDistribution(t * s - delta);
   }

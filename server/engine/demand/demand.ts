@@ -106,7 +106,8 @@ export class SharedDemand {
     if (!influence) return [];
     return this.cachedReach(`${train} ${x} ${side}`, () => {
       const node = system.nodes.findIndex((n) => n.x === x);
-      const span = node < 0 ? system.spanAt(x) : Math.min(Math.max(side === 1 ? node : node - 1, 0), system.spans - 1);
+      const span =
+        node < 0 ? system.spanAt(x) : Math.min(Math.max(side === 1 ? node : node - 1, 0), system.spans - 1);
       return reachAt(this.beam, train, x, influence.shear(x, span), this.depth);
     });
   }
@@ -170,7 +171,9 @@ export class InterfaceDemand {
 
   /** True where some load is passed sideways through this interface. */
   get isCrossed(): boolean {
-    return this.shared.beam.combinations.some((loads, c) => this.still[c] !== null || this.movesSideways(loads));
+    return this.shared.beam.combinations.some(
+      (loads, c) => this.still[c] !== null || this.movesSideways(loads),
+    );
   }
 
   /** The worst place under each combination; where the shear alone tells the positions they are left out. */
@@ -235,7 +238,12 @@ export class InterfaceDemand {
     if (this.movesSideways(loads)) {
       let points: Reach[] = [{ along: shared.stillIntegral(c, a, b), across, positions: [] }];
       for (const { train, factor } of loads.trains) {
-        points = addReach(points, shared.stretchReach(train, a, b), factor, factor * (this.trainAcross[train] ?? 0));
+        points = addReach(
+          points,
+          shared.stretchReach(train, a, b),
+          factor,
+          factor * (this.trainAcross[train] ?? 0),
+        );
       }
       return farthest(points, this.flowPerShear).at;
     }
@@ -248,7 +256,12 @@ export class InterfaceDemand {
     const fixed = stillShear(beam, loads, x, side);
     let points: Reach[] = [{ along: fixed, across: still ? valueAt(still, x, side) : 0, positions: [] }];
     for (const { train, factor } of loads.trains) {
-      points = addReach(points, this.shared.reach(train, x, side), factor, factor * (this.trainAcross[train] ?? 0));
+      points = addReach(
+        points,
+        this.shared.reach(train, x, side),
+        factor,
+        factor * (this.trainAcross[train] ?? 0),
+      );
     }
     return farthest(points, this.flowPerShear);
   }
@@ -261,11 +274,16 @@ export class InterfaceDemand {
       const a = grid[k] ?? 0;
       const b = grid[k + 1] ?? 0;
       let largest = Math.max(this.movingAt(loads, c, a, 1).value, this.movingAt(loads, c, b, -1).value);
-      for (let i = 1; i < 4; i++) largest = Math.max(largest, this.movingAt(loads, c, a + (i * (b - a)) / 4, 1).value);
+      for (let i = 1; i < 4; i++)
+        largest = Math.max(largest, this.movingAt(loads, c, a + (i * (b - a)) / 4, 1).value);
       while (next < places.length && (places[next] ?? 0) <= a) next++;
       for (; next < places.length && (places[next] ?? 0) < b; next++) {
         const x = places[next] ?? 0;
-        largest = Math.max(largest, this.movingAt(loads, c, x, -1).value, this.movingAt(loads, c, x, 1).value);
+        largest = Math.max(
+          largest,
+          this.movingAt(loads, c, x, -1).value,
+          this.movingAt(loads, c, x, 1).value,
+        );
       }
       cells[k] = largest;
     }
@@ -345,8 +363,8 @@ function integralOver(f: Piecewise, a: number, b: number): number {
     const u0 = Math.max(0, (a - from) / h);
     const u1 = Math.min(1, (b - from) / h);
     if (u1 <= u0) continue;
-    for (let d = 0; d < 4; d++) sum += (h * (f.cubic[4 * i + d] ?? 0) * (u1 ** (d + 1) - u0 ** (d + 1))) / (d + 1);
+    for (let d = 0; d < 4; d++)
+      sum += (h * (f.cubic[4 * i + d] ?? 0) * (u1 ** (d + 1) - u0 ** (d + 1))) / (d + 1);
   }
   return sum;
 }
-

@@ -24,8 +24,10 @@ export function stackLoad(
   const ramps: { from: number; to: number; start: number; end: number }[] = [];
   for (const load of loadCases[caseIndex]?.loads ?? []) {
     if (stackOfLoad(document, sideways, load.on) !== stack) continue;
-    if (load.kind === 'uniform') ramps.push({ from: load.from, to: load.to, start: load.value, end: load.value });
-    else if (load.kind === 'varying') ramps.push({ from: load.from, to: load.to, start: load.start, end: load.end });
+    if (load.kind === 'uniform')
+      ramps.push({ from: load.from, to: load.to, start: load.value, end: load.value });
+    else if (load.kind === 'varying')
+      ramps.push({ from: load.from, to: load.to, start: load.start, end: load.end });
     else if (load.kind === 'point') {
       const over = spread(load.x, depth, length);
       const value = load.value / (over.to - over.from);
@@ -58,7 +60,12 @@ export interface StackLoads {
   trainStack: (number | null)[];
 }
 
-export function stackLoads(document: MemberDocument, beam: Beam, sideways: Sideways, depth: number): StackLoads {
+export function stackLoads(
+  document: MemberDocument,
+  beam: Beam,
+  sideways: Sideways,
+  depth: number,
+): StackLoads {
   const stacks = Array.from({ length: sideways.stacks }, (_, s) => s);
   return {
     still: document.loadCases.map((_, c) =>

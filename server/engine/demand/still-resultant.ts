@@ -14,7 +14,9 @@ interface Squares {
 
 function squares(loads: CombinedLoads, still: Piecewise, flow: number): Squares {
   const edges = loads.shearMax === loads.shearMin ? [loads.shearMax] : [loads.shearMax, loads.shearMin];
-  const all = [...edges, still].flatMap((f) => Array.from({ length: f.breaks.length }, (_, i) => f.breaks[i] ?? 0));
+  const all = [...edges, still].flatMap((f) =>
+    Array.from({ length: f.breaks.length }, (_, i) => f.breaks[i] ?? 0),
+  );
   all.sort((a, b) => a - b);
   const end = all[all.length - 1] ?? 0;
   const breaks = all.filter((x, i) => i === 0 || x - (all[i - 1] ?? 0) > 1e-12 * end);

@@ -9,7 +9,13 @@ import { spread } from './sideways-load';
  * An axle spreads over the section's depth each side, so the load changes where an axle comes within reach;
  * near the beam's ends, where less length is left to spread over, it varies with the position and is sampled.
  */
-export function reachAt(beam: Beam, trainIndex: number, x: number, line: InfluenceLine, depth: number): Reach[] {
+export function reachAt(
+  beam: Beam,
+  trainIndex: number,
+  x: number,
+  line: InfluenceLine,
+  depth: number,
+): Reach[] {
   const train = beam.trains[trainIndex];
   if (!train) return [];
   const { length } = beam;

@@ -53,7 +53,8 @@ export function sidewaysTransfer(section: Section, interfaces: readonly Interfac
   const total = stiffness.reduce((sum, x) => sum + x, 0);
   const shares = stiffness.map((x) => x / total);
   const crossing = interfaces.map(
-    ({ a, b, connection, orientation }) => connection !== null && orientation === 'vertical' && stackOf[a] !== stackOf[b],
+    ({ a, b, connection, orientation }) =>
+      connection !== null && orientation === 'vertical' && stackOf[a] !== stackOf[b],
   );
   const edges = interfaces
     .filter((_, j) => crossing[j])
@@ -76,7 +77,11 @@ export function sidewaysTransfer(section: Section, interfaces: readonly Interfac
 }
 
 /** Which stack a load is put on; null where the document does not say. */
-export function stackOfLoad(document: MemberDocument, sideways: Sideways, on: string | undefined): number | null {
+export function stackOfLoad(
+  document: MemberDocument,
+  sideways: Sideways,
+  on: string | undefined,
+): number | null {
   if (on === undefined) return null;
   const index = document.pieces.findIndex((p) => p.id === on);
   return sideways.stackOf[index] ?? null;

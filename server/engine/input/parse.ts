@@ -63,7 +63,10 @@ function limitIssues(document: MemberDocument): Issue[] {
   const issues: Issue[] = [];
   const loads = document.loadCases.reduce((sum, c) => sum + c.loads.length, 0);
   if (loads > documentLimits.loads) {
-    issues.push({ path: 'loadCases', message: `The member has ${loads} loads: at most ${documentLimits.loads} are allowed.` });
+    issues.push({
+      path: 'loadCases',
+      message: `The member has ${loads} loads: at most ${documentLimits.loads} are allowed.`,
+    });
   }
   const cells = document.length / document.rules.zoneGrid;
   if (cells > documentLimits.zoneCells) {

@@ -98,16 +98,26 @@ function loadIssues(document: MemberDocument): Issue[] {
       }
       if (load.kind === 'moving') {
         if (load.to < load.from) {
-          issues.push({ path: `${path}.to`, message: 'The travel ends before it begins: “to” must not be below “from”.' });
+          issues.push({
+            path: `${path}.to`,
+            message: 'The travel ends before it begins: “to” must not be below “from”.',
+          });
         }
         return;
       }
       for (const end of ['from', 'to'] as const) {
         const off = offBeam(load[end], length);
-        if (off) issues.push({ path: `${path}.${end}`, message: `The load’s ${end === 'from' ? 'start' : 'end'} ${off}.` });
+        if (off)
+          issues.push({
+            path: `${path}.${end}`,
+            message: `The load’s ${end === 'from' ? 'start' : 'end'} ${off}.`,
+          });
       }
       if (load.to - load.from <= touching) {
-        issues.push({ path: `${path}.to`, message: 'The load ends where it begins, or before: “to” must be more than “from”.' });
+        issues.push({
+          path: `${path}.to`,
+          message: 'The load ends where it begins, or before: “to” must be more than “from”.',
+        });
       }
     });
   });
@@ -140,7 +150,8 @@ function connectionIssues(document: MemberDocument, connection: Connection, i: n
       message: 'The capacity of an adhesive is given as ultimate or allowable, in MPa.',
     });
   }
-  if (connection.zones) issues.push(...zoneIssues(connection.zones, document.length, `connections.${i}.zones`));
+  if (connection.zones)
+    issues.push(...zoneIssues(connection.zones, document.length, `connections.${i}.zones`));
   return issues;
 }
 
@@ -152,7 +163,10 @@ function zoneIssues(zones: readonly { from: number; to: number }[], length: numb
     if (!(to - from > touching)) {
       issues.push({ path: `${path}.${i}.to`, message: 'A zone must end after it begins.' });
     } else if (from - reached > touching) {
-      issues.push({ path: `${path}.${i}.from`, message: `No zone covers the beam from ${reached} to ${from} mm.` });
+      issues.push({
+        path: `${path}.${i}.from`,
+        message: `No zone covers the beam from ${reached} to ${from} mm.`,
+      });
     } else if (reached - from > touching) {
       issues.push({ path: `${path}.${i}.from`, message: `Zones overlap from ${from} to ${reached} mm.` });
     }
@@ -160,9 +174,15 @@ function zoneIssues(zones: readonly { from: number; to: number }[], length: numb
   }
   const last = order[order.length - 1];
   if (last && length - reached > touching) {
-    issues.push({ path: `${path}.${last.i}.to`, message: `No zone covers the beam from ${reached} to ${length} mm.` });
+    issues.push({
+      path: `${path}.${last.i}.to`,
+      message: `No zone covers the beam from ${reached} to ${length} mm.`,
+    });
   } else if (last && reached - length > touching) {
-    issues.push({ path: `${path}.${last.i}.to`, message: `The zones end at ${reached}, past the beam’s end at ${length} mm.` });
+    issues.push({
+      path: `${path}.${last.i}.to`,
+      message: `The zones end at ${reached}, past the beam’s end at ${length} mm.`,
+    });
   }
   return issues;
 }

@@ -8,7 +8,10 @@ export function idIssues(document: MemberDocument): Issue[] {
     const seen = new Set<string>();
     list.forEach(({ id }, i) => {
       if (seen.has(id)) {
-        issues.push({ path: `${path}.${i}.id`, message: `Two ${what} have the id ${id}: give each its own.` });
+        issues.push({
+          path: `${path}.${i}.id`,
+          message: `Two ${what} have the id ${id}: give each its own.`,
+        });
       }
       seen.add(id);
     });

@@ -120,7 +120,9 @@ function momentAbout(load: FrozenLoad, k: number, x: Term): Part {
   return {
     formula: `gamma_${k} * (b_${k} - a_${k}) / 6 * (3 * (q_${k} + r_${k}) * (${x.symbol} - b_${k}) + (b_${k} - a_${k}) * (2 * q_${k} + r_${k}))`,
     inputs: [gamma, ...ends(load, k), x],
-    value: ((load.factor * w) / 6) * (3 * (load.start + load.end) * (x.value - load.to) + w * (2 * load.start + load.end)),
+    value:
+      ((load.factor * w) / 6) *
+      (3 * (load.start + load.end) * (x.value - load.to) + w * (2 * load.start + load.end)),
   };
 }
 
@@ -130,7 +132,13 @@ const parts = (list: readonly (Part | null)[]): Part[] => list.filter((p) => p !
  * Total load and reactions of a state. All reactions but two come from the beam's equations; the last two are
  * worked out here from Σ V = 0 and Σ M = 0, so that the checker sees them balance.
  */
-export function reactionLines(book: LineBook, beam: Beam, state: State, name: string, length: number): StateTerms {
+export function reactionLines(
+  book: LineBook,
+  beam: Beam,
+  state: State,
+  name: string,
+  length: number,
+): StateTerms {
   const end = given('L', length, 'mm');
   const whole = `the whole beam in ${name}`;
   const W = writeSum(book, parts(state.loads.map(force)), {
@@ -150,7 +158,9 @@ export function reactionLines(book: LineBook, beam: Beam, state: State, name: st
     },
   );
   const terms: StateTerms = { state, name, reactions: [], moments: [] };
-  const held = beam.system.nodes.flatMap((node, n) => (node.support ? [{ node, n, id: node.support.id }] : []));
+  const held = beam.system.nodes.flatMap((node, n) =>
+    node.support ? [{ node, n, id: node.support.id }] : [],
+  );
   const moments = held.filter(({ node }) => node.support?.kind === 'fixed');
   const forceOf = (n: number): number => state.fields.reaction[n] ?? 0;
   const first = held[0];
@@ -183,7 +193,9 @@ export function reactionLines(book: LineBook, beam: Beam, state: State, name: st
     return terms;
   }
 
-  const solved = held.slice(1, -1).map(({ node, n }) => ({ x: node.x, term: given(symbolOf(n), forceOf(n), 'N') }));
+  const solved = held
+    .slice(1, -1)
+    .map(({ node, n }) => ({ x: node.x, term: given(symbolOf(n), forceOf(n), 'N') }));
   const clamps = moments.map(({ node, n }, i) => ({
     x: node.x,
     term: given(`M_${i + 1}`, state.fields.supportMoment[n] ?? 0, 'N mm'),
@@ -220,7 +232,12 @@ export function reactionLines(book: LineBook, beam: Beam, state: State, name: st
  * Which of the values at x is meant: an axle that stands exactly at x may be a hair left or right of it, and a
  * support or load there as well.
  */
-function sidesAt(state: State, x: number, side: -1 | 1, target: number): { side: -1 | 1; axleLeft: boolean; value: number } {
+function sidesAt(
+  state: State,
+  x: number,
+  side: -1 | 1,
+  target: number,
+): { side: -1 | 1; axleLeft: boolean; value: number } {
   let axles = 0;
   for (const load of state.loads) {
     if (load.kind === 'point' && load.axle && Math.abs(load.x - x) <= 1e-6) axles += load.factor * load.value;
@@ -293,7 +310,10 @@ export function momentLine(book: LineBook, terms: StateTerms, x: number, side: -
           source: 'Loads as entered, cut off at x',
         })
       : null;
-  const plus = [...left.map((r) => `${r.term.symbol} * (x - x_${r.term.symbol})`), ...clamps.map((m) => m.term.symbol)];
+  const plus = [
+    ...left.map((r) => `${r.term.symbol} * (x - x_${r.term.symbol})`),
+    ...clamps.map((m) => m.term.symbol),
+  ];
   return book.write({
     label,
     symbol: 'M',
@@ -314,7 +334,14 @@ export function momentLine(book: LineBook, terms: StateTerms, x: number, side: -
  * Deflection at x in a state: from w, θ, M and V at the node left of x and the loads between,
  * EI·w = EI·w0 + EI·θ0·d − M0·d²/2 − V0·d³/6 + Σ loads.
  */
-export function deflectionLine(book: LineBook, beam: Beam, terms: StateTerms, x: number, EI: Term, label: string): Term {
+export function deflectionLine(
+  book: LineBook,
+  beam: Beam,
+  terms: StateTerms,
+  x: number,
+  EI: Term,
+  label: string,
+): Term {
   const { state } = terms;
   const { nodes } = beam.system;
   let n = 0;
@@ -335,14 +362,19 @@ export function deflectionLine(book: LineBook, beam: Beam, terms: StateTerms, x:
     return [{ ...load, from: x0, start }];
   });
   const at = given('x', x, 'mm');
-  const own = between.length > 0
-    ? writeSum(book, between.map((load, k) => deflectionPart(load, k, at)), {
-        label: `Loads between x = ${shown(x0)} and ${shown(x)}: their part of EI·w`,
-        symbol: 'T',
-        unit: 'N mm^3',
-        source: 'EI·w″ = −M, integrated twice',
-      })
-    : null;
+  const own =
+    between.length > 0
+      ? writeSum(
+          book,
+          between.map((load, k) => deflectionPart(load, k, at)),
+          {
+            label: `Loads between x = ${shown(x0)} and ${shown(x)}: their part of EI·w`,
+            symbol: 'T',
+            unit: 'N mm^3',
+            source: 'EI·w″ = −M, integrated twice',
+          },
+        )
+      : null;
   return book.write({
     label,
     symbol: 'w',
@@ -376,7 +408,8 @@ function deflectionPart(load: FrozenLoad, k: number, x: Term): Part {
   const w = b - a;
   const A = x.value - a;
   const B = x.value - b;
-  const value = factor * ((q * (A ** 4 - B ** 4)) / 24 + ((r - q) / w) * ((A ** 5 - B ** 5) / 120 - (w * B ** 4) / 24));
+  const value =
+    factor * ((q * (A ** 4 - B ** 4)) / 24 + ((r - q) / w) * ((A ** 5 - B ** 5) / 120 - (w * B ** 4) / 24));
   const n = (s: string): string => `${s}_${k}`;
   return {
     formula: `${n('gamma')} * (${n('q')} * ((x - ${n('a')})^4 - (x - ${n('b')})^4) / 24 + (${n('r')} - ${n('q')}) / (${n('b')} - ${n('a')}) * (((x - ${n('a')})^5 - (x - ${n('b')})^5) / 120 - (${n('b')} - ${n('a')}) * (x - ${n('b')})^4 / 24))`,

@@ -3,7 +3,11 @@ import type { WorkedCapacity } from '../capacity/capacity';
 import { given, sumOf, type LineBook, type Term } from './book';
 
 const units = { fasteners: 'N', adhesive: 'MPa', continuous: 'N/mm' } as const;
-const words = { fasteners: 'one fastener', adhesive: 'one mm² of adhesive', continuous: 'one mm of line' } as const;
+const words = {
+  fasteners: 'one fastener',
+  adhesive: 'one mm² of adhesive',
+  continuous: 'one mm of line',
+} as const;
 
 /** R from its basis, line by line. Test values are taken in the unit of R, as pure numbers for the logarithm. */
 export function capacityLines(
@@ -14,11 +18,26 @@ export function capacityLines(
   worked: WorkedCapacity,
 ): Term {
   const unit = units[kind];
-  const write = (label: string, symbol: string, formula: string, inputs: Term[], value: number, of: string, source: string): Term =>
-    book.write({ label, symbol, formula, inputs, value, unit: of, source, interface: id });
+  const write = (
+    label: string,
+    symbol: string,
+    formula: string,
+    inputs: Term[],
+    value: number,
+    of: string,
+    source: string,
+  ): Term => book.write({ label, symbol, formula, inputs, value, unit: of, source, interface: id });
   const label = `Capacity of ${words[kind]} at ${id}`;
   if (capacity.basis === 'allowable') {
-    return write(label, 'R', 'F', [given('F', capacity.value, unit)], worked.value, unit, 'Allowable value as entered');
+    return write(
+      label,
+      'R',
+      'F',
+      [given('F', capacity.value, unit)],
+      worked.value,
+      unit,
+      'Allowable value as entered',
+    );
   }
   if (capacity.basis === 'ultimate') {
     return write(
@@ -53,7 +72,15 @@ export function capacityLines(
     '',
     standard,
   );
-  const used = write('The deviation used, at least 0.05', 's_used', 'max(s_y, 0.05)', [s], statistics.used, '', standard);
+  const used = write(
+    'The deviation used, at least 0.05',
+    's_used',
+    'max(s_y, 0.05)',
+    [s],
+    statistics.used,
+    '',
+    standard,
+  );
   const factor = given('k_s', statistics.ks, '');
   const m = write(
     `Lower 5 % value at 75 % confidence (k_s: non-central t quantile over √n, n = ${statistics.n})`,
@@ -64,5 +91,13 @@ export function capacityLines(
     unit,
     standard,
   );
-  return write(label, 'R', 'm_k / FS', [m, given('FS', capacity.factorOfSafety, '')], worked.value, unit, 'Factor of safety as entered');
+  return write(
+    label,
+    'R',
+    'm_k / FS',
+    [m, given('FS', capacity.factorOfSafety, '')],
+    worked.value,
+    unit,
+    'Factor of safety as entered',
+  );
 }

@@ -128,9 +128,7 @@ function balanceLines(
 ): void {
   const most = flow.sources.reduce((size, x) => Math.max(size, Math.abs(x)), 0);
   section.pieces.forEach(({ piece }, i) => {
-    const touching = flow.interfaces.filter(
-      ({ item }) => item.connection && (item.a === i || item.b === i),
-    );
+    const touching = flow.interfaces.filter(({ item }) => item.connection && (item.a === i || item.b === i));
     const own = touching.map(({ item }) => signed.get(item.id));
     const source = flow.sources[i] ?? 0;
     if (own.some((t) => t === undefined) || own.length === 0 || Math.abs(source) < 1e-9 * most) return;

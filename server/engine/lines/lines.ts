@@ -80,7 +80,14 @@ class BeamChapter {
     if (shear.combination >= 0) this.shear(shear.combination, shear, shear.value, 'Largest shear');
     if (moment.combination >= 0) {
       const terms = this.state(moment);
-      if (terms) momentLine(this.book, terms, moment.x, moment.side, `Largest moment, x = ${shown(moment.x)}, ${terms.name}`);
+      if (terms)
+        momentLine(
+          this.book,
+          terms,
+          moment.x,
+          moment.side,
+          `Largest moment, x = ${shown(moment.x)}, ${terms.name}`,
+        );
     }
     if (deflection.combination >= 0) {
       const terms = this.state(deflection);
@@ -154,7 +161,11 @@ class BeamChapter {
 }
 
 /** ∫V and the sideways load over the stretch of the most loaded fastener, in its combination. */
-function worstIntegral({ schedule, demand, own }: Worked['worked'][number]): { value: number; across: number } | null {
+function worstIntegral({
+  schedule,
+  demand,
+  own,
+}: Worked['worked'][number]): { value: number; across: number } | null {
   const { worstFastener, rows } = schedule;
   if (!worstFastener) return null;
   const { from, to, combination, force } = worstFastener;

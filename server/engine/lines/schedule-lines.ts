@@ -16,8 +16,15 @@ export function scheduleLines(
 ): void {
   const { peak, rows } = schedule;
   const id = item.id;
-  const write = (line: { label: string; symbol: string; formula: string; inputs: Term[]; value: number; unit: string; source: string }): Term =>
-    book.write({ ...line, interface: id });
+  const write = (line: {
+    label: string;
+    symbol: string;
+    formula: string;
+    inputs: Term[];
+    value: number;
+    unit: string;
+    source: string;
+  }): Term => book.write({ ...line, interface: id });
   if (schedule.peakCombination < 0) {
     write({
       label: `Flow at ${id}: nothing passes through it, so the largest spacing allowed is enough`,
@@ -135,7 +142,8 @@ function zoneLines(book: LineBook, id: string, schedule: Schedule, n: Term, R: T
       spacing = book.write({
         label: `Spacing in ${where} (q_g${k}: the largest flow in it${schedule.rules.mirror ? ' or in the zone it mirrors' : ''})`,
         symbol: `s_${k}`,
-        formula: governing.value > 0 ? `min(s_max, floor(n * ${R.symbol} / q_g${k} / step + 1e-9) * step)` : 's_max',
+        formula:
+          governing.value > 0 ? `min(s_max, floor(n * ${R.symbol} / q_g${k} / step + 1e-9) * step)` : 's_max',
         inputs: governing.value > 0 ? [largest, n, R, governing, step] : [largest],
         value: zone.spacing,
         unit: 'mm',

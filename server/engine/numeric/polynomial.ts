@@ -29,7 +29,14 @@ export function multiply(a: readonly number[], b: readonly number[]): number[] {
 }
 
 /** The same polynomial over the stretch [a, b] of u: coefficients in (u − a)/(b − a). */
-export function restrict(c: ArrayLike<number>, from: number, count: number, a: number, b: number, out: number[]): void {
+export function restrict(
+  c: ArrayLike<number>,
+  from: number,
+  count: number,
+  a: number,
+  b: number,
+  out: number[],
+): void {
   // Taylor shift to a, then scaling by b − a.
   for (let i = 0; i < count; i++) out[i] = c[from + i] ?? 0;
   out.length = count;

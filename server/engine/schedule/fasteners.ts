@@ -15,7 +15,10 @@ export function fastenerPositions(zones: readonly Zone[]): number[] {
 }
 
 /** The stretch each fastener takes: half-way to its neighbours, and out to the beam's ends. */
-export function fastenerStretches(positions: readonly number[], length: number): { from: number; to: number }[] {
+export function fastenerStretches(
+  positions: readonly number[],
+  length: number,
+): { from: number; to: number }[] {
   return positions.map((x, i) => {
     const before = positions[i - 1];
     const after = positions[i + 1];

@@ -86,7 +86,8 @@ export function scheduleInterface(
     pinned: false,
     notices: [],
   };
-  const spaced = connection.kind === 'fasteners' || (connection.kind === 'continuous' && connection.bead !== undefined);
+  const spaced =
+    connection.kind === 'fasteners' || (connection.kind === 'continuous' && connection.bead !== undefined);
   if (!spaced) {
     const carried = connection.kind === 'adhesive' ? item.contact * capacity : capacity;
     schedule.utilisation = peak.value / carried;
@@ -108,7 +109,8 @@ export function scheduleInterface(
   if (zones === null) {
     schedule.utilisation = spacings.smallest / (schedule.requiredSpacing ?? Infinity);
     schedule.status = 'over';
-    schedule.fasteners = bead > 0 ? null : { count: 0, positions: emptyRows(rows), forces: emptyRows(rows), utilisation: 0 };
+    schedule.fasteners =
+      bead > 0 ? null : { count: 0, positions: emptyRows(rows), forces: emptyRows(rows), utilisation: 0 };
     schedule.notices.push(noSchedule(item, demand, schedule, capacity, bead));
     return schedule;
   }
@@ -142,7 +144,10 @@ function emptyRows(rows: number): number[][] {
   return Array.from({ length: rows }, () => []);
 }
 
-function neededAtStations(demand: InterfaceDemand, nothing: number): { needed: number[]; governing: number[] } {
+function neededAtStations(
+  demand: InterfaceDemand,
+  nothing: number,
+): { needed: number[]; governing: number[] } {
   const { beam, stations } = demand.shared;
   const needed = new Array<number>(stations.length).fill(0);
   const governing = new Array<number>(stations.length).fill(-1);
@@ -189,10 +194,20 @@ function seekZones(
 ): Zone[] | null {
   const grid = zoneGrid(document.length, rules);
   const flows = largestInCells(demand, grid, nothing);
-  return bestZones(grid, Float64Array.from(flows, (q) => q / carried), spacings, rules);
+  return bestZones(
+    grid,
+    Float64Array.from(flows, (q) => q / carried),
+    spacings,
+    rules,
+  );
 }
 
-function placeFasteners(schedule: Schedule, zones: readonly Zone[], demand: InterfaceDemand, length: number): void {
+function placeFasteners(
+  schedule: Schedule,
+  zones: readonly Zone[],
+  demand: InterfaceDemand,
+  length: number,
+): void {
   const { rows, unitCapacity } = schedule;
   const positions = fastenerPositions(zones);
   const combinations = demand.shared.beam.combinations.length;
@@ -233,7 +248,9 @@ function adviseOnSchedule(schedule: Schedule, item: Interface, zones: readonly Z
   }
   if (schedule.pinned && spacings) {
     const least = Math.max(schedule.rules.spacingMin, bead);
-    const outside = zones.find((z) => z.spacing < least * (1 - 1e-9) || z.spacing > schedule.rules.spacingMax * (1 + 1e-9));
+    const outside = zones.find(
+      (z) => z.spacing < least * (1 - 1e-9) || z.spacing > schedule.rules.spacingMax * (1 + 1e-9),
+    );
     if (outside) {
       advise(
         'pinned-outside-rules',
@@ -243,7 +260,13 @@ function adviseOnSchedule(schedule: Schedule, item: Interface, zones: readonly Z
   }
 }
 
-function noSchedule(item: Interface, demand: InterfaceDemand, s: Schedule, capacity: number, bead: number): Notice {
+function noSchedule(
+  item: Interface,
+  demand: InterfaceDemand,
+  s: Schedule,
+  capacity: number,
+  bead: number,
+): Notice {
   const { spacings, rules } = s;
   const smallest = spacings?.smallest ?? rules.spacingMin;
   if (spacings && spacings.largest < spacings.smallest) {
@@ -264,7 +287,8 @@ function noSchedule(item: Interface, demand: InterfaceDemand, s: Schedule, capac
       `a layup with a shear flow of ${round((demand.flowPerShear / short) * 1000)} instead of ${round(demand.flowPerShear * 1000)} N/m for each newton of shear`,
     );
   }
-  const list = help.length > 1 ? `${help.slice(0, -1).join('; ')}; or ${help[help.length - 1] ?? ''}` : (help[0] ?? '');
+  const list =
+    help.length > 1 ? `${help.slice(0, -1).join('; ')}; or ${help[help.length - 1] ?? ''}` : (help[0] ?? '');
   return {
     code: 'no-schedule',
     interface: item.id,

@@ -42,7 +42,8 @@ export function zoneGrid(length: number, rules: Rules): number[] {
   const last = rules.mirror ? length / 2 : length;
   for (let i = 0; i * rules.zoneGrid < last - tolerance; i++) points.push(i * rules.zoneGrid);
   if (!rules.mirror) return [...points, length];
-  const middle = Math.abs((points[points.length - 1] ?? 0) + rules.zoneGrid - length / 2) <= tolerance ? [length / 2] : [];
+  const middle =
+    Math.abs((points[points.length - 1] ?? 0) + rules.zoneGrid - length / 2) <= tolerance ? [length / 2] : [];
   return [...points, ...middle, ...points.map((x) => length - x).reverse()];
 }
 
@@ -53,7 +54,12 @@ export function zoneGrid(length: number, rules: Rules): number[] {
  *
  * @param needs for each cell of the grid the largest 1/(required spacing), 1/mm
  */
-export function bestZones(grid: readonly number[], needs: Float64Array, spacings: Spacings, rules: Rules): Zone[] | null {
+export function bestZones(
+  grid: readonly number[],
+  needs: Float64Array,
+  spacings: Spacings,
+  rules: Rules,
+): Zone[] | null {
   const length = grid[grid.length - 1] ?? 0;
   const shortest = Math.min(rules.minZoneLength, length) - 1e-6;
   return rules.mirror
@@ -72,7 +78,13 @@ interface Table {
   spacing: Float64Array;
 }
 
-function cover(points: readonly number[], needs: Float64Array, spacings: Spacings, zones: number, shortest: number): Table {
+function cover(
+  points: readonly number[],
+  needs: Float64Array,
+  spacings: Spacings,
+  zones: number,
+  shortest: number,
+): Table {
   const n = points.length - 1;
   const size = (n + 1) * zones;
   const cost = new Float64Array(size).fill(Infinity);
@@ -163,7 +175,9 @@ function bestMirrored(
   const cells = grid.length - 1;
   const half = Math.floor(cells / 2); // cells that lie wholly in the left half
   const points = grid.slice(0, half + 1);
-  const paired = Float64Array.from({ length: half }, (_, i) => Math.max(needs[i] ?? 0, needs[cells - 1 - i] ?? 0));
+  const paired = Float64Array.from({ length: half }, (_, i) =>
+    Math.max(needs[i] ?? 0, needs[cells - 1 - i] ?? 0),
+  );
   const centre = cells % 2 === 1 ? (needs[half] ?? 0) : 0;
   const sides = Math.floor((maxZones - 1) / 2);
   const table = cover(points, paired, spacings, sides, shortest);
@@ -188,6 +202,8 @@ function bestMirrored(
   if (!best) return null;
   const left = trace(points, table, best.sides, best.at);
   const from = points[best.at] ?? 0;
-  const mirrored = left.map((z) => ({ from: length - z.to, to: length - z.from, spacing: z.spacing })).reverse();
+  const mirrored = left
+    .map((z) => ({ from: length - z.to, to: length - z.from, spacing: z.spacing }))
+    .reverse();
   return [...left, { from, to: length - from, spacing: best.spacing }, ...mirrored];
 }
