@@ -26,7 +26,7 @@ export function CapacityFields({ path, kind }: { path: string; kind: string }) {
   if (!labels) return null;
   const choices = kind === 'fasteners' ? [...bases, testBasis] : bases;
   return (
-    <fieldset className="grid gap-x-4 gap-y-3 sm:grid-cols-6">
+    <fieldset className="grid gap-x-4 gap-y-3 sm:grid-cols-8">
       <legend className="mb-2 font-semibold">Capacity</legend>
       <ChoiceField
         path={`${path}.basis`}
@@ -43,9 +43,14 @@ export function CapacityFields({ path, kind }: { path: string; kind: string }) {
             path={`${path}.value`}
             label={labels.ultimate}
             measure={labels.measure}
+            className="sm:col-span-3"
+          />
+          <QuantityField
+            path={`${path}.factorOfSafety`}
+            label="Factor of safety"
+            measure="number"
             className="sm:col-span-2"
           />
-          <QuantityField path={`${path}.factorOfSafety`} label="FS" measure="number" />
         </>
       )}
       {basis === 'allowable' && (
@@ -64,7 +69,7 @@ export function CapacityFields({ path, kind }: { path: string; kind: string }) {
             measure="number"
             className="sm:col-span-3"
           />
-          <TestValuesField path={`${path}.values`} className="sm:col-span-6" />
+          <TestValuesField path={`${path}.values`} className="sm:col-span-8" />
         </>
       )}
     </fieldset>

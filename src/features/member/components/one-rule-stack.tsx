@@ -1,13 +1,12 @@
-import { useMemo } from 'react';
+import { useEffect, useMemo } from 'react';
 import type { PointerEvent } from 'react';
 import { formatExact, formatQuantity, unitOf } from '@shared/units';
-import type { UnitSystem } from '@shared/units';
 import { xScale } from '@/components/drawing/curve';
 import { Elevation } from '@/components/drawing/elevation';
 import { elevationScale } from '@/components/drawing/elevation-geometry';
 import { EnvelopePanel } from '@/components/drawing/envelope-panel';
 import { FlowPanel } from '@/components/drawing/flow-panel';
-import { LOADS_HEIGHT, LoadMarks, shownLoads } from '@/components/drawing/load-marks';
+import { LoadMarks, shownLoads } from '@/components/drawing/load-marks';
 import { SupportMarks } from '@/components/drawing/support-marks';
 import { TapeRule } from '@/components/drawing/tape-rule';
 import { tapeTicks } from '@/components/drawing/tape-ticks';
@@ -18,103 +17,12 @@ import { eventsAlong, moveCursor, pointerGrain, snap, zoneAt } from '../model/cu
 import { drawnFasteners, drawnPieces, drawnZones, zonesNote } from '../model/drawn';
 import { carriedSteps } from '../model/worked';
 import type { Joint, Worked } from '../model/worked';
+import { CursorLine, GUTTER, HEIGHTS, NARROW, PanelName, layOut, zoneUnits } from './stack-frame';
 
-const GUTTER = 86;
-const NARROW = 600;
-const HEIGHTS = { elevation: 76, shear: 84, moment: 78, flow: 138, zones: 44, tape: 34, plate: 30 };
-const GAP = 20;
+type MovingKeys = 'key' | 'shiftKey' | 'ctrlKey' | 'metaKey' | 'altKey' | 'preventDefault';
+
+/** Pixels within which the pointer catches on an event. */
 const CATCH = 5;
-
-/** Where each panel begins; on a narrow screen every panel has its name above it instead of at its left. */
-const layOut = (narrow: boolean) => {
-  const name = narrow ? 16 : 0;
-  const elevation = 8 + name + LOADS_HEIGHT;
-  const shear = elevation + HEIGHTS.elevation + GAP + name;
-  const moment = shear + HEIGHTS.shear + GAP + name;
-  const flow = moment + HEIGHTS.moment + GAP + name;
-  const zones = flow + HEIGHTS.flow + (narrow ? GAP : 10);
-  const tape = zones + HEIGHTS.zones;
-  return { elevation, shear, moment, flow, zones, tape, end: tape + HEIGHTS.tape + HEIGHTS.plate };
-};
-
-function PanelName({
-  name,
-  unit,
-  y,
-  narrow,
-  right,
-}: {
-  name: string;
-  unit: string;
-  y: number;
-  narrow: boolean;
-  right: number;
-}) {
-  if (narrow)
-    return (
-      <text x={right} y={y} textAnchor="end" fontSize={11} fill="var(--ink2)">
-        {unit === '' ? name : `${name}, ${unit}`}
-      </text>
-    );
-  return (
-    <g>
-      <text x={0} y={y} fontSize={12} fontWeight={600} fill="var(--ink)">
-        {name}
-      </text>
-      {unit.split('\n').map((line, index) => (
-        <text key={line} x={0} y={y + 15 + 13 * index} fontSize={11} fill="var(--ink2)">
-          {line}
-        </text>
-      ))}
-    </g>
-  );
-}
-
-function CursorLine({
-  x,
-  text,
-  top,
-  tape,
-  width,
-}: {
-  x: number;
-  text: string;
-  top: number;
-  tape: number;
-  width: number;
-}) {
-  const plate = text.length * 7 + 14;
-  const middle = Math.min(width - plate / 2 - 1, Math.max(plate / 2 + 1, x));
-  return (
-    <g pointerEvents="none">
-      <path
-        d={`M${x} ${top}V${tape + HEIGHTS.tape + 4}`}
-        stroke="var(--ink)"
-        strokeDasharray="3 3"
-        strokeWidth={1.2}
-      />
-      <rect
-        x={middle - plate / 2}
-        y={tape + HEIGHTS.tape + 4}
-        width={plate}
-        height={20}
-        rx={2}
-        fill="var(--ink)"
-      />
-      <text
-        x={middle}
-        y={tape + HEIGHTS.tape + 14}
-        dy="0.36em"
-        textAnchor="middle"
-        fontSize={12}
-        fontWeight={500}
-        fill="var(--paper)"
-      >
-        {text}
-      </text>
-    </g>
-  );
-}
 
 /**
  * Elevation, loads, shear, moment, flow, zones and tape on one scale, with one cursor through all of them. Moves the
@@ -188,6 +96,22 @@ export function OneRuleStack({
     );
   };
 
+  const byKey = (event: Pick<KeyboardEvent, MovingKeys>) => {
+    if (event.ctrlKey || event.metaKey || event.altKey) return;
+    const moved = moveCursor(event, x, tape.step, length, events);
+    if (moved === null) return;
+    event.preventDefault();
+    onMove(moved);
+  };
+  // while nothing on the page has the focus, the arrow keys are the cursor's
+  useEffect(() => {
+    const onKey = (event: KeyboardEvent) => {
+      if (event.target === window.document.body) byKey(event);
+    };
+    window.addEventListener('keydown', onKey);
+    return () => window.removeEventListener('keydown', onKey);
+  });
+
   return (
     <div
       ref={ref}
@@ -199,13 +123,7 @@ export function OneRuleStack({
       aria-valuenow={Math.round(x)}
       aria-valuetext={spoken}
       className="rounded"
-      onKeyDown={(event) => {
-        const moved = moveCursor(event, x, tape.step, length, events);
-        if (moved === null || event.ctrlKey || event.metaKey || event.altKey) return;
-        event.preventDefault();
-        event.stopPropagation();
-        onMove(moved);
-      }}
+      onKeyDown={byKey}
     >
       {scale !== null && (
         <svg
@@ -316,11 +234,3 @@ export function OneRuleStack({
     </div>
   );
 }
-
-const zoneUnits = ({ outcome, connection }: Joint, units: UnitSystem): string => {
-  if (outcome.kind !== 'fasteners') return outcome.kind === 'adhesive' ? 'glued' : 'a line';
-  const { diameter, length } = connection.fastener ?? {};
-  const rows = outcome.rows === 1 ? '1 row' : `${outcome.rows} rows`;
-  if (diameter === undefined || length === undefined) return rows;
-  return `${rows}\n${formatQuantity(diameter, 'size', units)} × ${formatQuantity(length, 'size', units)}`;
-};

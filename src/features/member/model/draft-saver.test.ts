@@ -66,7 +66,7 @@ beforeEach(() => {
   saver = begin();
 });
 afterEach(() => {
-  saver.dispose();
+  saver.leave();
   vi.useRealTimers();
 });
 
@@ -127,6 +127,15 @@ describe('saving as one types', () => {
     await vi.advanceTimersByTimeAsync(2_000);
     expect(state()).toBe('saved');
     expect(server.held).toMatchObject({ document: { rows: 6 }, version: 2 });
+  });
+
+  it('sends what waits when the page is left', async () => {
+    saver.change({ rows: 9 });
+    await vi.advanceTimersByTimeAsync(10);
+    saver.leave();
+    await vi.advanceTimersByTimeAsync(50);
+    expect(server.held.document).toEqual({ rows: 9 });
+    expect(kept).toBeNull();
   });
 
   it('stops where the server will not have it, without forgetting what was typed', async () => {

@@ -51,6 +51,7 @@ export class DraftSaver {
   private timer: ReturnType<typeof setTimeout> | undefined;
   private request: AbortController | undefined;
   private retryAfter = FIRST_RETRY;
+  private left = false;
   /** documents sent since the last answer, any of which the server may hold by now */
   private sent: DraftDocument[] = [];
 
@@ -82,6 +83,7 @@ export class DraftSaver {
 
   /** Takes a changed document and sends it soon. */
   change(document: DraftDocument): void {
+    this.left = false;
     this.document = document;
     this.deps.keep({ document, version: this.version });
     if (this.snapshotNow.state.kind === 'conflict') return;
@@ -120,10 +122,12 @@ export class DraftSaver {
     this.change(document);
   }
 
-  /** Stops timers and requests; what is unsaved stays kept. */
-  dispose(): void {
+  /** The page is left: what waits is sent at once, what is under way goes on; what fails stays kept. */
+  leave(): void {
     clearTimeout(this.timer);
-    this.giveUpRequest();
+    if (this.snapshotNow.state.kind === 'waiting' || this.snapshotNow.state.kind === 'retrying')
+      void this.send();
+    this.left = true;
   }
 
   private show(change: Partial<SaverSnapshot>): void {
@@ -133,6 +137,7 @@ export class DraftSaver {
 
   private schedule(delay: number): void {
     clearTimeout(this.timer);
+    if (this.left) return;
     this.timer = setTimeout(() => void this.send(), delay);
   }
 

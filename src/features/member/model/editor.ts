@@ -1,5 +1,6 @@
 import { zodResolver } from '@hookform/resolvers/zod';
 import { useQueryClient } from '@tanstack/react-query';
+import type { QueryClient } from '@tanstack/react-query';
 import {
   createContext,
   useCallback,
@@ -56,9 +57,14 @@ export function useEditor(): Editor {
   return editor;
 }
 
-const createSaver = (member: Member): DraftSaver =>
+const createSaver = (member: Member, client: QueryClient): DraftSaver =>
   new DraftSaver(member, {
-    put: (document, version, signal) => saveDraft(member.id, document, version, signal),
+    put: async (document, version, signal) => {
+      const answer = await saveDraft(member.id, document, version, signal);
+      void client.invalidateQueries({ queryKey: queryKeys.members(member.projectId) });
+      void client.invalidateQueries({ queryKey: queryKeys.projects });
+      return answer;
+    },
     current: () => fetchCurrentMember(member.id),
     keep: (unsaved) => keepUnsaved(member.id, unsaved),
     now: () => Date.now(),
@@ -67,7 +73,7 @@ const createSaver = (member: Member): DraftSaver =>
 /** Sets up editing for a member that has just been loaded. */
 export function useMemberEditor(member: Member): Editor {
   const client = useQueryClient();
-  const [saver] = useState(() => createSaver(member));
+  const [saver] = useState(() => createSaver(member, client));
   const [kept] = useState(() => {
     const unsaved = member.may.edit ? keptUnsaved(member.id) : null;
     return unsaved !== null && !sameJson(unsaved.document, member.document) ? unsaved : null;
@@ -80,7 +86,7 @@ export function useMemberEditor(member: Member): Editor {
   useEffect(() => {
     if (kept !== null) saver.resume(kept.document, kept.version);
     void form.trigger();
-    return () => saver.dispose();
+    return () => saver.leave();
   }, [saver, kept, form]);
 
   useEffect(() => {
@@ -95,13 +101,6 @@ export function useMemberEditor(member: Member): Editor {
       window.removeEventListener('online', again);
     };
   }, [saver]);
-
-  const { version } = save.answer;
-  useEffect(() => {
-    if (version === member.version) return;
-    void client.invalidateQueries({ queryKey: queryKeys.members(member.projectId) });
-    void client.invalidateQueries({ queryKey: queryKeys.projects });
-  }, [client, version, member.version, member.projectId]);
 
   const show = useCallback(
     (next: DraftDocument) => {
