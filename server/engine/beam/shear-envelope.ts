@@ -270,7 +270,7 @@ function undominated(curves: Curve['c'][]): Curve['c'][] {
 }
 
 function crossings(p: Curve['c'], q: Curve['c']): number[] {
-  const d: [number, number, number, number] = [p[0] - q[0], p[1] - q[1], p[2] - q[2], p[3] - q[3]];
+  const d: number[] = [p[0] - q[0], p[1] - q[1], p[2] - q[2], p[3] - q[3]];
   const size = Math.max(Math.abs(p[0]), Math.abs(q[0]), Math.abs(p[1]), Math.abs(q[1])) * 1e-14;
   // A cubic or square part that is only rounding would send the closed root formula astray.
   while (d.length > 1 && Math.abs(d[d.length - 1] ?? 0) <= size) d.pop();

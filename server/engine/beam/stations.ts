@@ -32,8 +32,14 @@ export function stationsOf(beam: Beam, zoneGrid: number): Station[] {
     while (next < events.length && (events[next] ?? 0) < x - 1e-9 * length) next++;
     if (Math.abs((events[next] ?? 0) - x) > 1e-9 * length) places.push({ x, event: -1 });
   }
-  // Where a train's travel ends, its axles reach no farther: the envelope of V may jump there.
-  const reaches = beam.trains.flatMap((t) => [...t.offsets].flatMap((o) => [t.from + o, t.to + o]));
+  // The envelope of V may jump where an axle's travel ends, and where one axle stands while another goes off the end.
+  const reaches = beam.trains.flatMap((t) =>
+    [...t.offsets].flatMap((o) => [
+      t.from + o,
+      t.to + o,
+      ...[...t.offsets].flatMap((other) => [o - other, length + o - other]),
+    ]),
+  );
   const jumpsAt = new Set<number>();
   for (const x of [...new Set(reaches)].sort((a, b) => a - b)) {
     if (x <= 0 || x >= length) continue;

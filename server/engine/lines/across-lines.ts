@@ -1,7 +1,7 @@
 import { spread } from '../demand/sideways-load';
 import type { Sideways } from '../flow/sideways';
 import { given, sumOf, type LineBook, type Term } from './book';
-import { shown } from './beam-lines';
+import { shown } from './load-sums';
 import type { State } from './state';
 
 /**

@@ -1,7 +1,7 @@
 import type { Interface } from '../section/interfaces';
 import type { Schedule } from '../schedule/schedule';
 import { given, type LineBook, type Term } from './book';
-import { shown } from './beam-lines';
+import { shown } from './load-sums';
 
 /** Flow at the worst place, required spacing, zones, the most heavily loaded fastener, utilisation. */
 export function scheduleLines(
