@@ -23,8 +23,8 @@ function Search({ q, onSearch }: { q: string; onSearch: (q: string) => void }) {
   return (
     <input
       type="search"
-      aria-label="Search projects by name, number or client"
-      placeholder="Name, number, client…"
+      aria-label="Search projects by name, number, client or mark"
+      placeholder="Name, number, client, mark…"
       value={text}
       onChange={(event) => setText(event.target.value)}
       className={`${controlClass(false)} sm:max-w-70`}
@@ -68,7 +68,7 @@ export function ProjectsPage() {
         ) : projects.isError ? (
           <LoadError error={projects.error} retry={() => void projects.refetch()} />
         ) : items.length === 0 && q !== '' ? (
-          <EmptyState title={`No project has “${q}” in its name, number or client`}>
+          <EmptyState title={`No project has “${q}” in its name, number, client or marks`}>
             <Button
               className="mt-3"
               onClick={() => {
