@@ -131,6 +131,8 @@ describe.each([
           ['deflection', envelope.extremes.deflection] as const,
         ];
         for (const [of, { value, x, positions }] of spots) {
+          // a train that never comes on the beam leaves nothing to trace
+          if (value === 0) continue;
           expect(positions.map(({ load, loadCase }) => `${loadCase} ${load}`)).toEqual([`Q ${index}`]);
           const at = positions[0]?.x ?? NaN;
           expect(at).toBeGreaterThanOrEqual(moving.from - 1e-9);
