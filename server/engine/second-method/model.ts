@@ -2,7 +2,15 @@ import type { Combination, LoadCase, MemberDocument } from '@shared/schemas/memb
 import { buildBeam, type Beam } from './beam';
 import { at } from './linear';
 import { flowsPerShear, sideways, type Sideways } from './flows';
-import { axisOf, depthOf, findInterfaces, shapesOf, type Axis, type Interface, type PieceShape } from './section';
+import {
+  axisOf,
+  depthOf,
+  findInterfaces,
+  shapesOf,
+  type Axis,
+  type Interface,
+  type PieceShape,
+} from './section';
 import { solveStill, type StillLoads, type StillResponse } from './still';
 import { prepareUnitLoad, type UnitLoad } from './unit-load';
 
@@ -82,8 +90,7 @@ function massOf(pieces: readonly PieceShape[]): number | null {
 }
 
 function combinationsOf(document: MemberDocument): SecondCombination[] {
-  if (document.combinations.length === 0)
-    return [{ id: 'all', factors: document.loadCases.map(() => 1) }];
+  if (document.combinations.length === 0) return [{ id: 'all', factors: document.loadCases.map(() => 1) }];
   return document.combinations.map((combination: Combination) => ({
     id: combination.id,
     factors: document.loadCases.map(({ id }) => combination.factors[id] ?? 0),

@@ -114,7 +114,8 @@ export function read(model: Model, probe: Probe): Reading {
   return {
     still: model.cases.map((_, c) => probe.still(c)),
     trains: model.trains.map((train) => {
-      if (train.stack !== null) return trainPairs(model, train, probe.unitAlong, probe.unitAcross, probe.near);
+      if (train.stack !== null)
+        return trainPairs(model, train, probe.unitAlong, probe.unitAcross, probe.near);
       const { min, max } = trainRange(model, train, probe.unitAlong, probe.near, model.beam.determinate);
       return [
         { along: min, across: 0 },
@@ -124,28 +125,33 @@ export function read(model: Model, probe: Probe): Reading {
   };
 }
 
-/** The demand on one interface, over all combinations and positions; trains move independently of each other. */
-export function demandOn(model: Model, reading: Reading, interfaceIndex: number): Demand {
-  const flow = at(model.flow, interfaceIndex);
-  const crossing = model.sideways.across.map((row) => at(row, interfaceIndex));
+/** How shear and load put on stacks make themselves felt: at an interface, or flow 1 and nothing across for V itself. */
+export interface Felt {
+  flow: number;
+  /** by stack */
+  crossing: readonly number[];
+}
+
+/** The demand over all combinations and positions; trains move independently of each other. */
+export function demandOn(model: Model, reading: Reading, felt: Felt): Demand {
   const worst: Demand = { value: 0, along: 0, across: 0, combination: -1 };
   model.combinations.forEach(({ factors }, combination) => {
     const start: Pair = { along: 0, across: 0 };
     factors.forEach((factor, c) => {
       if (factor === 0) return;
       const still = at(reading.still, c);
-      start.along += factor * flow * still.along;
-      still.across.forEach((value, stack) => {
-        start.across += factor * at(crossing, stack) * value;
+      start.along += factor * felt.flow * still.along;
+      felt.crossing.forEach((share, stack) => {
+        start.across += factor * share * at(still.across, stack);
       });
     });
     let reached = [start];
     model.trains.forEach((train, t) => {
       const factor = at(factors, train.loadCase);
       if (factor === 0) return;
-      const share = train.stack === null ? 0 : at(crossing, train.stack);
+      const share = train.stack === null ? 0 : (felt.crossing[train.stack] ?? 0);
       const own = at(reading.trains, t).map(({ along, across }) => ({
-        along: factor * flow * along,
+        along: factor * felt.flow * along,
         across: factor * share * across,
       }));
       reached = sumOf(reached, hull(own));

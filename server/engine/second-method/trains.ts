@@ -75,6 +75,33 @@ export interface Range {
   max: number;
 }
 
+/** Samples this near to the best (as a part of the whole range) may hide a larger value beside them. */
+const NEAR_BEST = 0.05;
+
+/** Largest of samples, each top among its neighbours refined by golden section. */
+function refinedLargest(
+  positions: readonly number[],
+  values: readonly number[],
+  effect: (p: number) => number,
+): number {
+  let largest = -Infinity;
+  let least = Infinity;
+  for (const value of values) {
+    largest = Math.max(largest, value);
+    least = Math.min(least, value);
+  }
+  const worthwhile = largest - NEAR_BEST * (largest - least);
+  let best = largest;
+  values.forEach((value, i) => {
+    const before = i > 0 ? i - 1 : i;
+    const after = i + 1 < values.length ? i + 1 : i;
+    if (value < worthwhile || value < at(values, before) || value < at(values, after)) return;
+    if (value === at(values, before) && value === at(values, after)) return;
+    best = Math.max(best, golden(effect, at(positions, before), at(positions, after), 25).value);
+  });
+  return best;
+}
+
 /** Least and largest effect of a train over all its positions. */
 export function trainRange(
   model: Model,
@@ -86,21 +113,11 @@ export function trainRange(
   const positions = positionsToTry(model, train, near, straight ? 0 : 4);
   const effect = (p: number): number => trainEffect(model, train, unit, p);
   const values = positions.map(effect);
-  let low = 0;
-  let high = 0;
-  values.forEach((value, i) => {
-    if (value < at(values, low)) low = i;
-    if (value > at(values, high)) high = i;
-  });
-  const range = { min: at(values, low), max: at(values, high) };
-  if (straight) return range;
-  const around = (i: number): [number, number] => [
-    positions[i - 1] ?? at(positions, i),
-    positions[i + 1] ?? at(positions, i),
-  ];
+  if (straight) return { min: Math.min(...values), max: Math.max(...values) };
+  const opposite = values.map((value) => -value);
   return {
-    min: Math.min(range.min, -golden((p) => -effect(p), ...around(low), 25).value),
-    max: Math.max(range.max, golden(effect, ...around(high), 25).value),
+    min: -refinedLargest(positions, opposite, (p) => -effect(p)),
+    max: refinedLargest(positions, values, effect),
   };
 }
 
