@@ -12,6 +12,13 @@ export interface SegmentLoads {
   /** point loads (N down) and couples (N·mm, adding to M on the right) at the events */
   force: Float64Array;
   couple: Float64Array;
+  /** places at which each of these is not nothing */
+  used: {
+    start: readonly number[];
+    change: readonly number[];
+    force: readonly number[];
+    couple: readonly number[];
+  };
 }
 
 /**
@@ -40,6 +47,7 @@ export function segmentLoads(
     change: new Float64Array(segments),
     force: new Float64Array(events.length),
     couple: new Float64Array(events.length),
+    used: emptyUse,
   };
   if (loadCase.selfWeight && accepts(undefined)) loads.start.fill(selfWeight);
   for (const load of loadCase.loads) {
@@ -60,6 +68,12 @@ export function segmentLoads(
       }
     }
   }
+  loads.used = {
+    start: filled(loads.start),
+    change: filled(loads.change),
+    force: filled(loads.force),
+    couple: filled(loads.couple),
+  };
   return loads;
 }
 
@@ -80,7 +94,7 @@ function carry(s: Start, h: number, q0: number, q1: number): Start {
   ];
 }
 
-/** Solves one load case. `segmentOf[n]` is the event index of node n. */
+/** Solves the beam under loads that stand still. `nodeEvent[n]` is the event index of node n. */
 export function solveCase(
   system: BeamSystem,
   events: readonly number[],
@@ -179,29 +193,46 @@ function writeSegment(fields: Fields, i: number, s: Start, h: number, q0: number
   bend[6 * i + 5] = (h ** 4 * q1) / 120;
 }
 
-/** A linear combination of load cases. */
-export function combineFields(cases: readonly Fields[], factors: readonly number[], like: Fields): Fields {
-  const sum: Fields = {
-    shear: new Float64Array(like.shear.length),
-    moment: new Float64Array(like.moment.length),
-    bend: new Float64Array(like.bend.length),
-    reaction: new Float64Array(like.reaction.length),
-    supportMoment: new Float64Array(like.supportMoment.length),
+/** A weighted sum of load cases. Only what is there is added: most cases touch few places. */
+export function combineLoads(
+  cases: readonly SegmentLoads[],
+  factors: readonly number[],
+  segments: number,
+): SegmentLoads {
+  const sum: SegmentLoads = {
+    start: new Float64Array(segments),
+    change: new Float64Array(segments),
+    force: new Float64Array(segments + 1),
+    couple: new Float64Array(segments + 1),
+    used: emptyUse,
   };
-  cases.forEach((fields, c) => {
+  cases.forEach((loads, c) => {
     const factor = factors[c] ?? 0;
     if (factor === 0) return;
-    addScaled(sum.shear, fields.shear, factor);
-    addScaled(sum.moment, fields.moment, factor);
-    addScaled(sum.bend, fields.bend, factor);
-    addScaled(sum.reaction, fields.reaction, factor);
-    addScaled(sum.supportMoment, fields.supportMoment, factor);
+    addScaled(sum.start, loads.start, loads.used.start, factor);
+    addScaled(sum.change, loads.change, loads.used.change, factor);
+    addScaled(sum.force, loads.force, loads.used.force, factor);
+    addScaled(sum.couple, loads.couple, loads.used.couple, factor);
   });
   return sum;
 }
 
-function addScaled(target: Float64Array, source: Float64Array, factor: number): void {
-  for (let i = 0; i < target.length; i++) target[i] = (target[i] ?? 0) + factor * (source[i] ?? 0);
+const emptyUse: SegmentLoads['used'] = { start: [], change: [], force: [], couple: [] };
+
+/** Where a list is not nothing. */
+function filled(list: Float64Array): number[] {
+  const places: number[] = [];
+  for (let i = 0; i < list.length; i++) if (list[i] !== 0) places.push(i);
+  return places;
+}
+
+function addScaled(
+  target: Float64Array,
+  source: Float64Array,
+  places: readonly number[],
+  factor: number,
+): void {
+  for (const i of places) target[i] = (target[i] ?? 0) + factor * (source[i] ?? 0);
 }
 
 /** Self-weight of the whole section per length, N/mm; null where a density is missing. */

@@ -2,7 +2,7 @@ import type { Combination, MemberDocument } from '@shared/schemas/member';
 import { peakOf, weightedSum, type Peak, type Piecewise } from '../numeric/piecewise';
 import { beamEvents, placeIndex } from './events';
 import {
-  combineFields,
+  combineLoads,
   gravity,
   massPerLength,
   segmentLoads,
@@ -39,7 +39,6 @@ export interface Beam {
   events: number[];
   nodeEvent: number[];
   segmentLoads: SegmentLoads[];
-  cases: Fields[];
   trains: Train[];
   trainShear: { max: Piecewise; min: Piecewise }[];
   /** reactions of the trains: trainReactions[t][n], null where node n is no support */
@@ -64,7 +63,6 @@ export function analyseBeam(document: MemberDocument, EI: number): Beam {
   const nodeEvent = system.nodes.map((n) => placeIndex(events, n.x));
   const selfWeight = (massPerLength(document) ?? 0) * gravity * 1e-3;
   const loads = document.loadCases.map((c) => segmentLoads(c, events, selfWeight, () => true));
-  const cases = loads.map((l) => solveCase(system, events, nodeEvent, l));
 
   const moving = document.loadCases.flatMap((c, caseIndex) =>
     c.loads.flatMap((load, loadIndex) => (load.kind === 'moving' ? [{ load, caseIndex, loadIndex }] : [])),
@@ -95,10 +93,10 @@ export function analyseBeam(document: MemberDocument, EI: number): Beam {
     }
   }
 
-  const [like] = cases;
+  const segments = events.length - 1;
   const combinations = combinationsOf(document).map((combination): CombinedLoads => {
     const factors = document.loadCases.map((c) => combination.factors[c.id] ?? 0);
-    const fields = combineFields(cases, factors, like ?? emptyFields(system, events));
+    const fields = solveCase(system, events, nodeEvent, combineLoads(loads, factors, segments));
     const used = trains.flatMap((t, train) => {
       const factor = factors[t.caseIndex] ?? 0;
       return factor === 0 ? [] : [{ train, factor }];
@@ -136,23 +134,11 @@ export function analyseBeam(document: MemberDocument, EI: number): Beam {
     events,
     nodeEvent,
     segmentLoads: loads,
-    cases,
     trains,
     trainShear,
     trainReactions,
     combinations,
     caseIds: document.loadCases.map((c) => c.id),
-  };
-}
-
-function emptyFields(system: BeamSystem, events: readonly number[]): Fields {
-  const segments = events.length - 1;
-  return {
-    shear: new Float64Array(3 * segments),
-    moment: new Float64Array(4 * segments),
-    bend: new Float64Array(6 * segments),
-    reaction: new Float64Array(system.nodes.length),
-    supportMoment: new Float64Array(system.nodes.length),
   };
 }
 

@@ -103,9 +103,10 @@ interface Quantity {
 export function largestMoment(
   beam: Beam,
   stations: readonly Station[],
-  values: readonly StationValues[],
+  values: readonly (StationValues | null)[],
+  floor: number,
 ): Extreme {
-  return largest(beam, stations, values, {
+  return largest(beam, stations, values, floor, {
     field: 'moment',
     count: 4,
     max: (v) => v.momentMax,
@@ -118,9 +119,10 @@ export function largestMoment(
 export function largestDeflection(
   beam: Beam,
   stations: readonly Station[],
-  values: readonly StationValues[],
+  values: readonly (StationValues | null)[],
+  floor: number,
 ): Extreme {
-  const found = largest(beam, stations, values, {
+  const found = largest(beam, stations, values, floor, {
     field: 'bend',
     count: 6,
     max: (v) => v.bendMax,
@@ -130,30 +132,24 @@ export function largestDeflection(
   return { ...found, value: found.value / beam.EI };
 }
 
+/** @param floor the largest magnitude that the stations show already: it bounds the search between them */
 function largest(
   beam: Beam,
   stations: readonly Station[],
-  values: readonly StationValues[],
+  values: readonly (StationValues | null)[],
+  floor: number,
   q: Quantity,
 ): Extreme {
   const best: Extreme = { value: 0, x: 0, side: 1, combination: -1, positions: [] };
-  // What the stations already show bounds the search below.
-  const floor = values.reduce((most, v) => Math.max(most, peak(q.max(v)), -trough(q.min(v))), 0);
   beam.combinations.forEach((loads, c) => {
-    const v = values[c];
-    if (!v) return;
-    const found =
-      loads.trains.length === 0
-        ? largestStill(beam, loads, q, Math.max(floor * (1 - 1e-9), Math.abs(best.value)))
-        : largestMoving(beam, stations, loads, v, q, Math.max(floor * (1 - 1e-9), Math.abs(best.value)));
+    const v = values[c] ?? null;
+    const least = Math.max(floor * (1 - 1e-9), Math.abs(best.value));
+    const found = v ? largestMoving(beam, stations, loads, v, q, least) : largestStill(beam, loads, q, least);
     if (found && Math.abs(found.value) > Math.abs(best.value) * same)
       Object.assign(best, found, { combination: c });
   });
   return best;
 }
-
-const peak = (a: Float64Array): number => a.reduce((most, x) => Math.max(most, x), -Infinity);
-const trough = (a: Float64Array): number => a.reduce((least, x) => Math.min(least, x), Infinity);
 
 function largestStill(
   beam: Beam,
@@ -167,6 +163,9 @@ function largestStill(
   let size = floor;
   const c: number[] = new Array<number>(q.count).fill(0);
   for (let i = 0; i + 1 < events.length; i++) {
+    let most = 0;
+    for (let d = 0; d < q.count; d++) most += Math.abs(coefficients[q.count * i + d] ?? 0);
+    if (most <= size) continue;
     for (const sign of [1, -1] as const) {
       for (let d = 0; d < q.count; d++) c[d] = sign * (coefficients[q.count * i + d] ?? 0);
       if (upperBound(c, 0, q.count) <= size) continue;

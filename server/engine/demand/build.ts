@@ -20,12 +20,7 @@ export function demandsOf(
   flow: SectionFlow,
   sideways: Sideways,
 ): { demands: (InterfaceDemand | null)[]; nothing: number } {
-  const shared = new SharedDemand(
-    beam,
-    section.depth,
-    envelope.stations,
-    envelope.values.map((v) => ({ max: v.shearMax, min: v.shearMin })),
-  );
+  const shared = new SharedDemand(beam, section.depth, envelope.stations, envelope.told);
   const loads = stackLoads(document, beam, sideways, section.depth);
   const demands = flow.interfaces.map(({ item, flowPerShear }, j) => {
     if (!item.connection) return null;

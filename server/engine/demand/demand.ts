@@ -1,3 +1,4 @@
+import type { CalculationResult } from '@shared/schemas/result';
 import type { Beam, CombinedLoads } from '../beam/combinations';
 import type { Position } from '../beam/extremes';
 import type { Station } from '../beam/stations';
@@ -21,7 +22,7 @@ export interface FlowPeak {
 
 /** What the interfaces of a member share: cells, stretches and trains are looked at once for all of them. */
 export class SharedDemand {
-  private readonly cellCache = new Map<string, Float64Array[]>();
+  private readonly cellCache = new Map<string, Float64Array>();
   private readonly stretchCache = new Map<string, Float64Array>();
   private readonly reachCache = new Map<string, Reach[]>();
   private readonly cumulated: Float64Array[];
@@ -30,24 +31,23 @@ export class SharedDemand {
     readonly beam: Beam,
     readonly depth: number,
     readonly stations: readonly Station[],
-    readonly stationShear: readonly { max: Float64Array; min: Float64Array }[],
+    readonly envelope: Pick<CalculationResult['envelope'], 'shearMax' | 'shearMin' | 'governing'>,
   ) {
     this.cumulated = beam.combinations.map(({ fields }) => cumulated(beam.events, fields.shear));
   }
 
-  /** The largest |V| of each combination within each cell of a grid. */
-  cellShear(grid: readonly number[]): Float64Array[] {
+  /** The largest |V| of all combinations within each cell of a grid. */
+  cellShear(grid: readonly number[]): Float64Array {
     const key = grid.join(' ');
     const known = this.cellCache.get(key);
     if (known) return known;
-    const cells = this.beam.combinations.map(({ shearMax, shearMin }) => {
-      const largest = new Float64Array(grid.length - 1);
+    const largest = new Float64Array(grid.length - 1);
+    for (const { shearMax, shearMin } of this.beam.combinations) {
       raiseCells(shearMax, grid, 1, largest);
       raiseCells(shearMin, grid, -1, largest);
-      return largest;
-    });
-    this.cellCache.set(key, cells);
-    return cells;
+    }
+    this.cellCache.set(key, largest);
+    return largest;
   }
 
   /** ∫V dx from a to b of a combination's loads that stand still. */
@@ -191,31 +191,56 @@ export class InterfaceDemand {
     });
   }
 
-  /** The largest flow of each combination within each cell of a grid, N/mm. */
-  cells(grid: readonly number[]): Float64Array[] {
-    const shear = this.shared.cellShear(grid);
-    return this.shared.beam.combinations.map((loads, c) => {
+  /** The largest flow of all combinations within each cell of a grid, N/mm. */
+  cells(grid: readonly number[]): Float64Array {
+    const largest = this.shared.cellShear(grid).map((v) => v * this.flowPerShear);
+    this.shared.beam.combinations.forEach((loads, c) => {
       const still = this.still[c] ?? null;
-      if (this.movesSideways(loads)) return this.movingCells(loads, c, grid);
-      if (still) return raiseResultantCells(loads, still, this.flowPerShear, grid);
-      return (shear[c] ?? new Float64Array(0)).map((v) => v * this.flowPerShear);
+      const own = this.movesSideways(loads)
+        ? this.movingCells(loads, c, grid)
+        : still
+          ? raiseResultantCells(loads, still, this.flowPerShear, grid)
+          : null;
+      own?.forEach((q, i) => {
+        if (q > (largest[i] ?? 0)) largest[i] = q;
+      });
     });
+    return largest;
   }
 
-  /** The flow at each station under one combination, N/mm. */
-  atStations(c: number): Float64Array {
-    const { beam, stations, stationShear } = this.shared;
-    const loads = beam.combinations[c];
-    const shear = stationShear[c];
-    if (!loads || !shear) return new Float64Array(stations.length);
-    const still = this.still[c] ?? null;
-    if (this.movesSideways(loads)) {
-      return Float64Array.from(stations, (s) => this.movingAt(loads, c, s.x, s.side).value);
-    }
-    return Float64Array.from(stations, (s, i) => {
-      const v = Math.max(Math.abs(shear.max[i] ?? 0), Math.abs(shear.min[i] ?? 0)) * this.flowPerShear;
-      return still ? Math.hypot(v, valueAt(still, s.x, s.side)) : v;
+  /** The largest flow at each station, N/mm, and the combination that asks for it (−1 where there is none). */
+  atStations(nothing: number): { needed: number[]; governing: number[] } {
+    const { stations, envelope, beam } = this.shared;
+    const needed: number[] = [];
+    const governing: number[] = [];
+    stations.forEach((_, i) => {
+      const v =
+        Math.max(Math.abs(envelope.shearMax[i] ?? 0), Math.abs(envelope.shearMin[i] ?? 0)) *
+        this.flowPerShear;
+      needed.push(v > nothing ? v : 0);
+      governing.push(v > nothing ? (envelope.governing.shear[i] ?? -1) : -1);
     });
+    beam.combinations.forEach((loads, c) => {
+      const still = this.still[c] ?? null;
+      const moves = this.movesSideways(loads);
+      if (!moves && !still) return;
+      stations.forEach(({ x, side }, i) => {
+        const q = moves ? this.movingAt(loads, c, x, side).value : this.stillAt(loads, still, x, side);
+        if (q > nothing && q > (needed[i] ?? 0) * (1 + 1e-9)) {
+          needed[i] = q;
+          governing[i] = c;
+        }
+      });
+    });
+    return { needed, governing };
+  }
+
+  private stillAt(loads: CombinedLoads, still: Piecewise | null, x: number, side: -1 | 1): number {
+    const v = Math.max(
+      Math.abs(valueAt(loads.shearMax, x, side)),
+      Math.abs(valueAt(loads.shearMin, x, side)),
+    );
+    return Math.hypot(v * this.flowPerShear, still ? valueAt(still, x, side) : 0);
   }
 
   /**

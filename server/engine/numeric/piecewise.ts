@@ -121,6 +121,13 @@ export function eachOverlap(
 export function raiseCells(f: Piecewise, grid: readonly number[], sign: 1 | -1, cells: Float64Array): void {
   const c: number[] = [0, 0, 0, 0];
   eachOverlap(f.breaks, grid, (cell, piece, a, b) => {
+    const k = 4 * piece;
+    const most =
+      Math.abs(f.cubic[k] ?? 0) +
+      Math.abs(f.cubic[k + 1] ?? 0) +
+      Math.abs(f.cubic[k + 2] ?? 0) +
+      Math.abs(f.cubic[k + 3] ?? 0);
+    if (most <= (cells[cell] ?? 0)) return;
     restrict(f.cubic, 4 * piece, 4, a, b, c);
     if (sign === -1) for (let d = 0; d < 4; d++) c[d] = -(c[d] ?? 0);
     const known = cells[cell] ?? 0;

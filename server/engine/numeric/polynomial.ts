@@ -39,7 +39,7 @@ export function restrict(
 ): void {
   // Taylor shift to a, then scaling by b − a.
   for (let i = 0; i < count; i++) out[i] = c[from + i] ?? 0;
-  out.length = count;
+  if (out.length !== count) out.length = count;
   if (a !== 0) {
     for (let i = 0; i < count - 1; i++) {
       for (let j = count - 2; j >= i; j--) out[j] = (out[j] ?? 0) + a * (out[j + 1] ?? 0);

@@ -66,7 +66,7 @@ export function scheduleInterface(
     loads && found.positions.length === 0
       ? { ...found, positions: shearPositions(beam, loads, found.x, found.shear).positions }
       : found;
-  const { needed, governing } = neededAtStations(demand, nothing);
+  const { needed, governing } = demand.atStations(nothing);
   const schedule: Schedule = {
     rows,
     rules,
@@ -144,33 +144,9 @@ function emptyRows(rows: number): number[][] {
   return Array.from({ length: rows }, () => []);
 }
 
-function neededAtStations(
-  demand: InterfaceDemand,
-  nothing: number,
-): { needed: number[]; governing: number[] } {
-  const { beam, stations } = demand.shared;
-  const needed = new Array<number>(stations.length).fill(0);
-  const governing = new Array<number>(stations.length).fill(-1);
-  beam.combinations.forEach((_, c) => {
-    demand.atStations(c).forEach((q, i) => {
-      if (q > nothing && q > (needed[i] ?? 0) * over) {
-        needed[i] = q;
-        governing[i] = c;
-      }
-    });
-  });
-  return { needed, governing };
-}
-
-/** The largest flow over all combinations within each cell, N/mm; flows that are nothing are 0. */
+/** The largest flow within each cell, N/mm; flows that are nothing are 0. */
 function largestInCells(demand: InterfaceDemand, grid: readonly number[], nothing: number): number[] {
-  const largest = new Array<number>(grid.length - 1).fill(0);
-  for (const cells of demand.cells(grid)) {
-    cells.forEach((q, i) => {
-      if (q > nothing && q > (largest[i] ?? 0)) largest[i] = q;
-    });
-  }
-  return largest;
+  return Array.from(demand.cells(grid), (q) => (q > nothing ? q : 0));
 }
 
 function pinnedZones(zones: readonly Zone[], length: number): Zone[] {
