@@ -30,9 +30,9 @@ const focused = () =>
   page.evaluate(() => {
     const element = document.activeElement;
     if (!(element instanceof HTMLElement)) return { name: '', ring: false };
-    const labelled = element instanceof HTMLInputElement ? (element.labels?.item(0).textContent ?? '') : '';
-    const name =
-      element.getAttribute('aria-label') ?? (labelled === '' ? (element.textContent ?? '') : labelled);
+    const labels = element instanceof HTMLInputElement ? Array.from(element.labels ?? []) : [];
+    const labelled = labels.map((label) => label.textContent).join(' ');
+    const name = element.getAttribute('aria-label') ?? (labelled === '' ? element.textContent : labelled);
     const { outlineStyle, outlineWidth } = getComputedStyle(element);
     return { name: name.trim(), ring: outlineStyle !== 'none' && parseFloat(outlineWidth) >= 2 };
   });
@@ -53,7 +53,8 @@ const tabTo = async (name: RegExp): Promise<void> => {
 };
 
 const place = () => page.getByRole('slider').getAttribute('aria-valuenow').then(Number);
-const readout = () => page.getByRole('region', { name: 'At x' }).innerText();
+const readout = async () =>
+  (await page.getByRole('region', { name: 'At x' }).innerText()).replace(/\s+/g, ' ');
 
 describe('the cursor', () => {
   it('goes by steps, to events and to both ends', async () => {

@@ -94,7 +94,7 @@ describe.each(['light', 'dark'] as const)('%s', (colorScheme) => {
     expect(await faultsOf(page), 'tables').toEqual([]);
     expect(await sticksOut(page), 'tables').toEqual([]);
     await page.getByRole('button', { name: /Rolf Amber/ }).click();
-    await page.getByRole('button', { name: 'Sign out' }).waitFor();
+    await page.getByRole('button', { name: 'Sign out', exact: true }).waitFor();
     expect(await faultsOf(page), 'the person’s menu').toEqual([]);
     expect(faults).toEqual([]);
     await page.context().close();

@@ -26,7 +26,15 @@ export async function openOffice(): Promise<Office> {
   const client = join(folder, 'client');
   execFileSync(
     process.execPath,
-    [join(root, 'node_modules/vite/bin/vite.js'), 'build', '--outDir', client, '--logLevel', 'warn'],
+    [
+      join(root, 'node_modules/vite/bin/vite.js'),
+      'build',
+      '--outDir',
+      client,
+      '--emptyOutDir',
+      '--logLevel',
+      'warn',
+    ],
     { cwd: root, stdio: 'inherit', env: { ...process.env, NODE_ENV: 'production' } },
   );
   const database = openDatabase(join(folder, 'office.db'));

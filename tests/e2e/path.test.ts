@@ -68,7 +68,7 @@ describe('the way in', () => {
     expect(new URL(page.url()).pathname).toBe('/members/m1/fastening');
 
     await page.getByRole('button', { name: /Rolf Amber/ }).click();
-    await page.getByRole('button', { name: 'Sign out' }).click();
+    await page.getByRole('button', { name: 'Sign out', exact: true }).click();
     await heading('Sign in').waitFor();
     await page.goto(`${office.address}/projects`);
     await heading('Sign in').waitFor();

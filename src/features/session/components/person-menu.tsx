@@ -42,7 +42,7 @@ export function PersonMenu({ person }: { person: Person }) {
   const signOut = useSignOut();
   return (
     <Popover
-      label={`${initials(person.name)}, ${person.name}: theme, units, sign out`}
+      label={`${initials(person.name)}, ${person.name}, your settings`}
       trigger={initials(person.name)}
       triggerClass="border-line2 text-small hover:border-ink2 flex size-8 items-center justify-center rounded-full border font-semibold pointer-coarse:size-11"
     >
