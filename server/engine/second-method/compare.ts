@@ -22,6 +22,7 @@ export const SAMPLED = 2e-3;
 const SMALL = 1e-3;
 
 interface Comparer {
+  sampled: boolean;
   figures: Comparison[];
   /** two figures; `size`: the largest of their kind in this member */
   figure: (name: string, first: number, second: number, size: number, tolerance?: number) => void;
@@ -50,6 +51,7 @@ function comparer(sampled: boolean): Comparer {
     figures.push({ figure, first, second, difference, tolerance: allowed, same: difference <= allowed });
   };
   return {
+    sampled,
     figures,
     figure: (name, first, second, size, tolerance = EXACT) =>
       push(name, first, second, size, tolerance, false),
@@ -63,6 +65,9 @@ function comparer(sampled: boolean): Comparer {
     whole: (name, first, second) => push(name, first, second, 1, 0, false),
   };
 }
+
+/** A required spacing far beyond this (mm) is as good as none. */
+const LONG = 1000;
 
 /** null stands for "none": equal only to itself. */
 const orNone = (value: number | null): number => value ?? -1;
@@ -78,7 +83,6 @@ function compareSections(
   to.figure('section.I', first.I, second.I, 0);
   to.figure('section.massPerLength', orNone(first.massPerLength), orNone(second.massPerLength), 0);
   to.whole('section.interfaces', first.interfaces.length, second.interfaces.length);
-  const largestMoment = Math.max(0, ...second.interfaces.map((each) => each.firstMoment ?? 0));
   second.interfaces.forEach((other, i) => {
     const own = first.interfaces[i];
     if (own === undefined) return;
@@ -86,7 +90,7 @@ function compareSections(
     const alike = own.id === other.id && own.orientation === other.orientation;
     to.whole(`${name}.orientation`, alike && own.connected === other.connected ? 1 : 0, 1);
     to.figure(`${name}.contact`, own.contact, other.contact, 0);
-    to.figure(`${name}.firstMoment`, orNone(own.firstMoment), orNone(other.firstMoment), largestMoment);
+    to.figure(`${name}.firstMoment`, orNone(own.firstMoment), orNone(other.firstMoment), second.I / second.depth);
     to.figure(`${name}.flowPerShear`, own.flowPerShear, other.flowPerShear, 1 / second.depth);
   });
 }
@@ -94,7 +98,7 @@ function compareSections(
 function compareReactions(to: Comparer, first: CalculationResult['reactions'], second: SecondResult): void {
   const size = (key: 'max' | 'momentMax', least: 'min' | 'momentMin'): number =>
     Math.max(0, ...second.reactions.flatMap((each) => [Math.abs(each[key]), Math.abs(each[least])]));
-  const forces = size('max', 'min');
+  const forces = Math.max(size('max', 'min'), shearSize(second));
   const moments = Math.max(size('momentMax', 'momentMin'), Math.abs(second.extremes.moment.value));
   to.whole('reactions', first.length, second.reactions.length);
   for (const other of second.reactions) {
@@ -110,6 +114,13 @@ function compareReactions(to: Comparer, first: CalculationResult['reactions'], s
     to.envelope(`${name}.momentMin`, own.momentMin, other.momentMin, moments, -1);
   }
 }
+
+/** What shear is measured by: its largest, or where there is only moment, moment over depths of the beam. */
+const shearSize = (second: SecondResult): number =>
+  Math.max(
+    Math.abs(second.extremes.shear.value),
+    (SMALL * Math.abs(second.extremes.moment.value)) / second.section.depth,
+  );
 
 /** The worst station of each curve: one figure a curve. */
 function compareEnvelopes(to: Comparer, first: CalculationResult['envelope'], second: SecondResult): void {
@@ -134,7 +145,7 @@ function compareEnvelopes(to: Comparer, first: CalculationResult['envelope'], se
   const extremes = second.extremes;
   for (const [curve, up] of curves) {
     const kind = curve.startsWith('shear') ? 'shear' : curve.startsWith('moment') ? 'moment' : 'deflection';
-    const size = Math.abs(extremes[kind].value);
+    const size = kind === 'shear' ? shearSize(second) : Math.abs(extremes[kind].value);
     const inner = comparer(second.accuracy === 'sampled');
     x.forEach((place, i) => {
       const side = sidesOf(i);
@@ -153,7 +164,8 @@ function compareEnvelopes(to: Comparer, first: CalculationResult['envelope'], se
 function compareExtremes(to: Comparer, first: CalculationResult['extremes'], second: SecondResult): void {
   for (const kind of ['shear', 'moment', 'deflection'] as const) {
     const other = Math.abs(second.extremes[kind].value);
-    to.demand(`extremes.${kind}`, Math.abs(first[kind].value), other, other);
+    const size = kind === 'shear' ? shearSize(second) / SMALL : other;
+    to.demand(`extremes.${kind}`, Math.abs(first[kind].value), other, size);
   }
 }
 
@@ -188,7 +200,7 @@ function compareZones(to: Comparer, name: string, first: InterfaceResult, second
   const limit = second.requiredSpacing === null ? 0 : second.requiredSpacing * flow;
   first.zones.forEach((zone, i) => {
     const within = flow === 0 ? 0 : (zone.spacing * flowIn(second, zone.from, zone.to)) / limit;
-    to.demand(`${name}.zones.${i}.utilisation`, zone.utilisation, within, second.utilisation);
+    to.demand(`${name}.zones.${i}.utilisation`, zone.utilisation, within, 1);
     to.whole(
       `${name}.zones.${i}.perRow`,
       zone.perRow,
@@ -206,15 +218,14 @@ function compareZones(to: Comparer, name: string, first: InterfaceResult, second
   to.whole(`${name}.fasteners`, fasteners === null ? 0 : 1, other === null ? 0 : 1);
   if (fasteners === null || other === null) return;
   to.whole(`${name}.fasteners.count`, fasteners.count, other.count);
-  const size = Math.max(0, ...other.forces);
-  to.demand(`${name}.fasteners.utilisation`, fasteners.utilisation, other.utilisation, other.utilisation);
+  to.demand(`${name}.fasteners.utilisation`, fasteners.utilisation, other.utilisation, 1);
   fasteners.positions.forEach((row, r) => {
     const inner = comparer(false);
-    const innerForces = comparer(true);
+    const innerForces = comparer(to.sampled);
     row.forEach((place, i) => {
       inner.figure(`${name}.positions.${r}.${i}`, place, other.positions[i] ?? NaN, 0);
       const own = fasteners.forces[r]?.[i] ?? NaN;
-      innerForces.demand(`${name}.forces.${r}.${i}`, own, other.forces[i] ?? NaN, size);
+      innerForces.demand(`${name}.forces.${r}.${i}`, own, other.forces[i] ?? NaN, second.capacity);
     });
     for (const { figures } of [inner, innerForces]) {
       const worst = figures.reduce<Comparison | null>(
@@ -235,12 +246,12 @@ function compareInterface(
   const name = `interfaces.${second.id}`;
   to.figure(`${name}.capacity`, first.capacity, second.capacity, 0);
   to.demand(`${name}.peakFlow`, first.peakFlow.value, second.peakFlow.value, largestFlow);
-  to.demand(`${name}.utilisation`, first.utilisation, second.utilisation, 0);
+  to.demand(`${name}.utilisation`, first.utilisation, second.utilisation, 1);
   to.demand(
     `${name}.requiredSpacing`,
     first.requiredSpacing === null ? 0 : 1 / first.requiredSpacing,
     second.requiredSpacing === null ? 0 : 1 / second.requiredSpacing,
-    0,
+    1 / LONG,
   );
   to.whole(`${name}.over`, first.status === 'over' ? 1 : 0, second.status === 'over' ? 1 : 0);
   compareZones(to, name, first, second);
@@ -258,7 +269,10 @@ export function compare(first: CalculationResult, second: SecondResult): Compari
   compareEnvelopes(to, first.envelope, second);
   compareExtremes(to, first.extremes, second);
   to.whole('interfaces', first.interfaces.length, second.interfaces.length);
-  const largestFlow = Math.max(0, ...second.interfaces.map((each) => each.peakFlow.value));
+  const largestFlow = Math.max(
+    shearSize(second) / second.section.depth,
+    ...second.interfaces.map((each) => each.peakFlow.value),
+  );
   second.interfaces.forEach((other, i) => {
     const own = first.interfaces[i];
     if (own !== undefined && own.id === other.id) compareInterface(to, own, other, largestFlow);

@@ -30,7 +30,8 @@ const rulesOf = (document: MemberDocument, connection: Connection): ZoneRules =>
     spacingMax: own.spacingMax ?? rules.spacingMax,
     maxZones: own.maxZones ?? rules.maxZones,
     zoneGrid: own.zoneGrid ?? rules.zoneGrid,
-    minZoneLength: own.minZoneLength ?? rules.minZoneLength,
+    // of a beam shorter than that the whole is one zone
+    minZoneLength: Math.min(own.minZoneLength ?? rules.minZoneLength, document.length),
     mirror: own.mirror ?? rules.mirror,
   };
 };
@@ -206,7 +207,9 @@ function interfaceOf(scanned: Scanned, each: Interface, connection: Connection):
   const places = placesOf(zones);
   const forces =
     connection.kind === 'fasteners'
-      ? forcesOf(model, scanned.readStretch, places, felt, strength.rows)
+      ? worst.value === 0
+        ? places.map(() => 0)
+        : forcesOf(model, scanned.readStretch, places, felt, strength.rows)
       : null;
   const fasteners =
     forces === null
@@ -264,13 +267,15 @@ export function recalculate(
   const readStation = stationReader(model);
   const shear = peaksOf(model, gaps, readStation, { flow: 1, crossing: [] });
   const largest = worstOf(shear);
+  const moment = extremeOf(model, gaps, 'moment');
   const scanned: Scanned = {
     model,
     gaps,
     shear,
     readStation,
     readStretch: stretchReader(model, events),
-    nothing: (1e-9 * largest.value) / model.depth,
+    // V itself is nothing where only couples act
+    nothing: (1e-9 * Math.max(largest.value, (1e-3 * Math.abs(moment.value)) / model.length)) / model.depth,
   };
   const moves = model.trains.some((train) =>
     model.combinations.some(({ factors }) => at(factors, train.loadCase) !== 0),
@@ -283,7 +288,7 @@ export function recalculate(
     stations: [...new Set(stations)].map((x) => stationAt(model, x)),
     extremes: {
       shear: placeOf(model, { ...largest, value: largest.along }),
-      moment: placeOf(model, extremeOf(model, gaps, 'moment')),
+      moment: placeOf(model, moment),
       deflection: placeOf(model, extremeOf(model, gaps, 'deflection')),
     },
     interfaces: model.interfaces.flatMap((each) =>
