@@ -135,6 +135,8 @@ describe('formatting', () => {
     expect(formatQuantity(-25.4, 'length', 'us')).toBe('\u22121″');
     expect(formatQuantity(38.1, 'size', 'us')).toBe('1 1/2″');
     expect(formatQuantity(3.1, 'size', 'us')).toBe('0.122″');
+    expect(formatQuantity(-0.001, 'size', 'us')).toBe('0″');
+    expect(formatQuantity(-3.1, 'size', 'us')).toBe('\u22120.122″');
     expect(formatQuantity(304.79, 'length', 'us')).toBe('1′');
     expect(formatWithUnit(2400, 'length', 'metric')).toBe('2\u202f400\u00a0mm');
     expect(formatWithUnit(62.5, 'size', 'metric')).toBe('62.5\u00a0mm');

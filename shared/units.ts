@@ -104,7 +104,7 @@ const formatFeet = (value: number): string => {
 const formatInches = (value: number): string => {
   const inches = Math.abs(value) / INCH;
   const sixteenths = Math.round(inches * 16);
-  const sign = value < 0 ? MINUS : '';
+  const sign = value < 0 && inches >= 0.0005 ? MINUS : '';
   if (Math.abs(sixteenths / 16 - inches) * INCH < 0.02) return sign + inchesInSixteenths(sixteenths);
   return `${sign}${formatNumber(inches, inches >= 10 ? 1 : inches >= 1 ? 2 : 3)}″`;
 };

@@ -43,7 +43,7 @@ function Fasteners({
 }) {
   const look = fastenerLook(fasteners, pieces);
   if (look === null) return null;
-  const opacity = (faint: boolean) => (quiet ? 0.45 : 1) * (faint ? 0.45 : 1);
+  const opacity = (faint: boolean) => (quiet ? 0.45 : 1) * (faint ? 0.6 : 1);
   if (look.kind === 'heads')
     return look.rows.map(({ z, xs }) => (
       <path key={z} d={dots(xs, heights.y(z), scale)} fill="var(--ink)" opacity={opacity(look.faint)} />

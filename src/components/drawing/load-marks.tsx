@@ -71,16 +71,30 @@ function Arrow({ x, from, to, up }: { x: number; from: number; to: number; up: b
   );
 }
 
-function Couple({ x, y, sagging }: { x: number; y: number; sagging: boolean }) {
-  // positive adds to M on its right: it turns clockwise
-  const [start, sweep, end] = sagging ? [-7, 1, 7] : [7, 0, -7];
+const COUPLE_RADIUS = 8;
+const BARB = 5.5;
+
+/** An arc open at the bottom with a barb where it ends; `turn` in radians, clockwise from the right. */
+const onArc = (x: number, y: number, turn: number) => ({
+  x: x + COUPLE_RADIUS * Math.cos(turn),
+  y: y + COUPLE_RADIUS * Math.sin(turn),
+});
+
+function Couple({ x, y, clockwise }: { x: number; y: number; clockwise: boolean }) {
+  const [left, right] = [onArc(x, y, (5 * Math.PI) / 6), onArc(x, y, Math.PI / 6)];
+  const [from, to] = clockwise ? [left, right] : [right, left];
+  const side = clockwise ? 1 : -1;
+  // the way the arc comes from at its end, turned half a barb to each side
+  const back = Math.atan2(-0.87, 0.5 * side);
+  const barb = [-0.55, 0.55].map(
+    (half) => `M${to.x} ${to.y}l${BARB * Math.cos(back + half)} ${BARB * Math.sin(back + half)}`,
+  );
+  const path = `M${from.x} ${from.y}A${COUPLE_RADIUS} ${COUPLE_RADIUS} 0 1 ${clockwise ? 1 : 0} ${to.x} ${to.y}${barb.join('')}`;
   return (
-    <path
-      d={`M${x + start} ${y + 3}A8 8 0 1 ${sweep} ${x + end} ${y + 3}m${sagging ? -5 : 5} -2l${sagging ? 5 : -5} 2.5l${sagging ? 1 : -1} -5.5`}
-      fill="none"
-      stroke="var(--ink)"
-      strokeWidth={1.4}
-    />
+    <g fill="none">
+      <path d={path} stroke="var(--sheet)" strokeWidth={5} />
+      <path d={path} stroke="var(--ink)" strokeWidth={1.5} />
+    </g>
   );
 }
 
@@ -176,7 +190,7 @@ function Written({ label }: { label: WantedLabel }) {
         x={from - 2}
         y={label.y - 10}
         width={to - from + 4}
-        height={13}
+        height={12}
         fill="var(--sheet)"
         fillOpacity={0.92}
       />
@@ -248,8 +262,9 @@ export function LoadMarks({
           return (
             <Arrow key={index} x={scale.at(load.x)} from={base - 56} to={base - 2} up={load.value < 0} />
           );
+        // a positive couple adds to M on its right: it turns clockwise
         if (load.kind === 'couple')
-          return <Couple key={index} x={scale.at(load.x)} y={base - 14} sagging={load.value > 0} />;
+          return <Couple key={index} x={scale.at(load.x)} y={base - 14} clockwise={load.value > 0} />;
         if (load.kind === 'moving')
           return (
             <Train

@@ -51,7 +51,7 @@ describe('why a spacing', () => {
     expect(whyAt(worked, joint, 1200, 'metric')).toEqual({
       title: 'Why at 70 in zone 1',
       lines: [
-        'C1 Person governs at x = 0',
+        'C1 Person governs at x\u00a0=\u00a00',
         'V = 490\u00a0N',
         'q = V·Q/I = 9.68\u00a0N/mm',
         'R = 900 / 2.5 = 360\u00a0N a nail',

@@ -137,7 +137,7 @@ export function whyAt(worked: Worked, joint: Joint, x: number, units: UnitSystem
   const say: Say = (value, quantity) => formatWithUnit(value, quantity, units);
   const { outcome } = joint;
   const where = (governed: Governed) =>
-    `${governed.combination} governs at x = ${formatQuantity(governed.x, 'length', units)}`;
+    `${governed.combination} governs at x\u00a0=\u00a0${formatQuantity(governed.x, 'length', units)}`;
 
   if (outcome.zones.length > 0) {
     const index = zoneAt(outcome.zones, x);
