@@ -215,7 +215,8 @@ function adviseOnSchedule(schedule: Schedule, item: Interface, zones: readonly Z
     if (schedule.status === 'ok') schedule.status = 'advice';
     schedule.notices.push({ code, interface: item.id, message });
   };
-  if (fasteners && worstFastener && fasteners.utilisation > over) {
+  // Where a zone is over already, its fasteners are over as well: that is no further news.
+  if (fasteners && worstFastener && schedule.utilisation <= over && fasteners.utilisation > over) {
     const x = fasteners.positions[0]?.[worstFastener.index] ?? 0;
     advise(
       'single-fastener',
