@@ -140,6 +140,9 @@ function cumulated(events: readonly number[], shear: Float64Array): Float64Array
   return sums;
 }
 
+/** How many places of a long train are looked at one by one; missing one by a step costs less than 2e-5. */
+const mostPlaces = 1500;
+
 /** What one interface has to carry, combination by combination. */
 export class InterfaceDemand {
   /** load passed sideways that stands still, N/mm, for each combination; null where there is none */
@@ -359,7 +362,12 @@ export class InterfaceDemand {
       }
     }
     const sorted = [...found].filter((x) => x >= 0 && x <= length).sort((a, b) => a - b);
-    return sorted.filter((x, i) => i === 0 || x - (sorted[i - 1] ?? 0) > 1e-9 * length);
+    const apart = sorted.filter((x, i) => i === 0 || x - (sorted[i - 1] ?? 0) > 1e-9 * length);
+    if (apart.length <= mostPlaces) return apart;
+    // A long train has so many such places that they lie closer than any of them matters.
+    const kept: number[] = [];
+    for (const x of apart) if (x - (kept[kept.length - 1] ?? -Infinity) >= length / mostPlaces) kept.push(x);
+    return kept;
   }
 }
 
