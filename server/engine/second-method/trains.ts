@@ -159,7 +159,7 @@ export function trainPairs(
   near: readonly number[],
 ): Pair[] {
   return hull(
-    positionsToTry(model, train, near, 6).map((p) => ({
+    positionsToTry(model, train, near, 20).map((p) => ({
       along: trainEffect(model, train, along, p),
       across: trainEffect(model, train, across, p),
     })),

@@ -52,16 +52,37 @@ export function prepareUnitLoad(beam: Beam): UnitLoad {
     };
   });
 
-  const spread = (row: Float64Array, a: number): number => {
-    const element = at(elements, elementAt(beam, a));
-    const n = shapes(a - element.from, element.to - element.from);
-    const f = element.freedoms;
-    return at(row, f[0]) * n[0] + at(row, f[1]) * n[1] + at(row, f[2]) * n[2] + at(row, f[3]) * n[3];
+  const last = elements.length - 1;
+  // called millions of times: searched, read and shaped in place rather than by the helpers of other files
+  const froms = Float64Array.from(elements, ({ from }) => from);
+  const lengths = Float64Array.from(elements, ({ from, to }) => to - from);
+  const freedoms = Int32Array.from(elements.flatMap((element) => element.freedoms));
+  const holding = (a: number): number => {
+    let low = 0;
+    let high = last;
+    while (low < high) {
+      const middle = (low + high + 1) >> 1;
+      if ((froms[middle] ?? 0) <= a) low = middle;
+      else high = middle - 1;
+    }
+    return low;
+  };
+  const spread = (row: Float64Array, a: number, e: number): number => {
+    const h = lengths[e] ?? 1;
+    const s = a - (froms[e] ?? 0);
+    const u = s / h;
+    const v = 1 - u;
+    const f = 4 * e;
+    return (
+      (row[freedoms[f] ?? 0] ?? 0) * v * v * (1 + 2 * u) +
+      (row[freedoms[f + 1] ?? 0] ?? 0) * s * v * v +
+      (row[freedoms[f + 2] ?? 0] ?? 0) * u * u * (3 - 2 * u) -
+      (row[freedoms[f + 3] ?? 0] ?? 0) * s * u * v
+    );
   };
   /** Fixed-end shear and moment at the left end of the loaded element. */
   const fixedEnds = (e: number, a: number): { shear: number; moment: number } => {
-    const element = at(elements, e);
-    const n = shapes(a - element.from, element.to - element.from);
+    const n = shapes(a - (froms[e] ?? 0), lengths[e] ?? 1);
     return { shear: n[0], moment: -n[1] };
   };
 
@@ -69,8 +90,9 @@ export function prepareUnitLoad(beam: Beam): UnitLoad {
     const e = elementAt(beam, x);
     const row = at(rows, e).shear;
     return (a: number): number => {
-      const far = spread(row, a);
-      if (elementAt(beam, a) !== e) return far;
+      const loaded = holding(a);
+      const far = spread(row, a, loaded);
+      if (loaded !== e) return far;
       return far + fixedEnds(e, a).shear - (x > a ? 1 : 0);
     };
   };
@@ -80,8 +102,9 @@ export function prepareUnitLoad(beam: Beam): UnitLoad {
     const s = x - at(elements, e).from;
     const row = combine([at(rows, e).moment, at(rows, e).shear], [1, s]);
     return (a: number): number => {
-      const far = spread(row, a);
-      if (elementAt(beam, a) !== e) return far;
+      const loaded = holding(a);
+      const far = spread(row, a, loaded);
+      if (loaded !== e) return far;
       const ends = fixedEnds(e, a);
       return far + ends.moment + ends.shear * s - Math.max(0, x - a);
     };
@@ -93,8 +116,9 @@ export function prepareUnitLoad(beam: Beam): UnitLoad {
     const { deflection, rotation, moment, shear } = at(rows, e);
     const row = combine([deflection, rotation, moment, shear], [1, s, (-s * s) / 2 / EI, -(s ** 3) / 6 / EI]);
     return (a: number): number => {
-      const far = spread(row, a);
-      if (elementAt(beam, a) !== e) return far;
+      const loaded = holding(a);
+      const far = spread(row, a, loaded);
+      if (loaded !== e) return far;
       const ends = fixedEnds(e, a);
       const past = Math.max(0, x - a);
       return far + (-(ends.moment * s * s) / 2 - (ends.shear * s ** 3) / 6 + past ** 3 / 6) / EI;
@@ -110,12 +134,11 @@ export function prepareUnitLoad(beam: Beam): UnitLoad {
       overlap,
     );
     return (a: number): number => {
-      const e = elementAt(beam, a);
-      const element = at(elements, e);
-      const far = spread(row, a);
-      const covered = at(overlap, e);
+      const e = holding(a);
+      const far = spread(row, a, e);
+      const covered = overlap[e] ?? 0;
       if (covered === 0) return far;
-      const behind = Math.max(0, Math.min(to, element.to) - Math.max(from, a));
+      const behind = Math.max(0, Math.min(to, at(elements, e).to) - Math.max(from, a));
       return far + fixedEnds(e, a).shear * covered - behind;
     };
   };
@@ -131,7 +154,7 @@ export function prepareUnitLoad(beam: Beam): UnitLoad {
           )
         : combine([at(compliance, w)], [stiffness]);
     if (stiffness === null) row[w] = 1;
-    return (a: number): number => spread(row, a);
+    return (a: number): number => spread(row, a, holding(a));
   };
 
   const supportMomentOf = (support: number) => {
@@ -146,7 +169,7 @@ export function prepareUnitLoad(beam: Beam): UnitLoad {
       each,
       each.map(() => 1),
     );
-    return (a: number): number => spread(row, a);
+    return (a: number): number => spread(row, a, holding(a));
   };
 
   return { shearAt, momentAt, deflectionAt, shearOver, reactionOf, supportMomentOf };
