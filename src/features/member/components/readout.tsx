@@ -1,3 +1,4 @@
+import type { ReactNode } from 'react';
 import { formatQuantity, formatWithUnit } from '@shared/units';
 import type { Quantity, UnitSystem } from '@shared/units';
 import { Panel } from '@/components/ui/panel';
@@ -50,7 +51,7 @@ export function Readout({ worked, joint, x }: { worked: Worked; joint: Joint | n
   const units = useUnits();
   const { envelope } = worked.result;
   const at = (values: readonly number[]) => curveAt(envelope.x, values, x);
-  const rows: { name: string; value: React.ReactNode; wide?: boolean }[] = [
+  const rows: { name: string; value: ReactNode }[] = [
     { name: 'Shear V', value: sayEnvelope(at(envelope.shearMax), at(envelope.shearMin), 'force', units) },
     { name: 'Moment M', value: sayEnvelope(at(envelope.momentMax), at(envelope.momentMin), 'moment', units) },
     {
@@ -70,7 +71,7 @@ export function Readout({ worked, joint, x }: { worked: Worked; joint: Joint | n
       rows.push({ name: 'Zone', value: `${zone + 1} · at ${formatQuantity(inZone.spacing, 'size', units)}` });
     rows.push(
       { name: 'Utilisation', value: <Utilisation value={used} bar={false} /> },
-      { name: 'Governs', value: governs === null ? 'nothing' : combinationName(governs), wide: true },
+      { name: 'Governs', value: governs === null ? 'nothing' : combinationName(governs) },
     );
   }
   return (
