@@ -1,0 +1,118 @@
+import { describe, expect, it } from 'vitest';
+import { calculateMember } from '../../server/engine/calculate-member';
+import { compare, type Comparison } from '../../server/engine/second-method/compare';
+import { recalculate } from '../../server/engine/second-method/recalculate';
+import { randomMember } from '../support/random-members';
+
+/*
+ * Two methods that share no code work out the same random members. Where both are exact (loads at rest; V, M and reactions
+ * under trains on determinate beams) every figure agrees to 1e-6. Where the second method samples the positions of a train
+ * (indeterminate beams, trains on one ply) it may find up to `SAMPLED` less than the first, never more.
+ *
+ * SECOND_SEED in the environment starts at another seed, SECOND_TIMES takes so many times the members.
+ */
+const FIRST_SEED = Number(process.env['SECOND_SEED'] ?? 0);
+const TIMES = Number(process.env['SECOND_TIMES'] ?? 1);
+const GROUP = 65 * TIMES;
+const GROUPS = Array.from({ length: 8 }, (_, i) => FIRST_SEED + i * GROUP);
+
+interface Told {
+  seed: number;
+  figures: readonly Comparison[] | string;
+}
+
+/** What differs in one member; null where nothing does. */
+function differences(seed: number): Told | null {
+  const outcome = calculateMember(randomMember(seed));
+  if (!outcome.ok) return { seed, figures: `refused: ${JSON.stringify(outcome.refusal.issues)}` };
+  const figures = compare(outcome.result, recalculate(outcome.document, outcome.result.envelope.x));
+  const unlike = figures.filter(({ same }) => !same);
+  return unlike.length === 0 ? null : { seed, figures: unlike };
+}
+
+describe('The first method and the second agree on random members', () => {
+  it.each(GROUPS)('from seed %i on', (from) => {
+    const told: Told[] = [];
+    for (let seed = from; seed < from + GROUP; seed += 1) {
+      const unlike = differences(seed);
+      if (unlike !== null) told.push(unlike);
+    }
+    expect(told, 'figures that differ, by seed').toEqual([]);
+  });
+});
+
+describe('The comparison', () => {
+  const outcome = calculateMember(randomMember(4));
+  if (!outcome.ok) throw new Error('the member of this test is refused');
+  const { document, result } = outcome;
+  const second = recalculate(document, result.envelope.x);
+
+  it('notices a reaction, a flow and a spacing that are off by two millionths', () => {
+    const off = structuredClone(result);
+    const reaction = off.reactions[0];
+    const first = off.interfaces[0];
+    if (reaction === undefined || first === undefined) throw new Error('no reaction or interface');
+    const largest = Math.max(...off.reactions.map(({ max, min }) => Math.max(Math.abs(max), Math.abs(min))));
+    reaction.max += 2e-6 * largest;
+    first.peakFlow.value *= 1 + 2e-6;
+    off.section.EI *= 1 - 2e-6;
+    const named = compare(off, second)
+      .filter(({ same }) => !same)
+      .map(({ figure }) => figure);
+    expect(named).toContain(`reactions.${reaction.combination}.${reaction.support}.max`);
+    expect(named).toContain(`interfaces.${first.id}.peakFlow`);
+    expect(named).toContain('section.EI');
+  });
+
+  it('notices a single station of a curve', () => {
+    const off = structuredClone(result);
+    const middle = Math.floor(off.envelope.x.length / 2);
+    const largest = Math.abs(off.extremes.moment.value);
+    off.envelope.momentMax[middle] = (off.envelope.momentMax[middle] ?? 0) + 2e-6 * largest;
+    const named = compare(off, second)
+      .filter(({ same }) => !same)
+      .map(({ figure }) => figure);
+    expect(named).toEqual([`envelope.momentMax@${off.envelope.x[middle]}`]);
+  });
+});
+
+describe('The random members', () => {
+  const members = Array.from({ length: 520 }, (_, seed) => randomMember(seed));
+  const part = (holds: (member: (typeof members)[number]) => boolean): number =>
+    members.filter(holds).length / members.length;
+
+  it('are the same for the same seed', () => {
+    expect(members[17]).toEqual(randomMember(17));
+    expect(members[17]).not.toEqual(randomMember(18));
+  });
+
+  it('hold every kind of support, load and capacity, trains in about a third', () => {
+    const trains = part(({ loadCases }) =>
+      loadCases.some(({ loads }) => (loads ?? []).some(({ kind }) => kind === 'moving')),
+    );
+    expect(trains).toBeGreaterThan(0.28);
+    expect(trains).toBeLessThan(0.42);
+    const loads = members.flatMap(({ loadCases }) => loadCases.flatMap((each) => each.loads ?? []));
+    expect(new Set(loads.map(({ kind }) => kind))).toEqual(
+      new Set(['uniform', 'varying', 'point', 'couple', 'moving']),
+    );
+    expect(loads.some((load) => load.on !== undefined)).toBe(true);
+    const supports = members.flatMap((member) => member.supports.map(({ kind }) => kind));
+    expect(new Set(supports)).toEqual(new Set(['pin', 'roller', 'fixed', 'spring']));
+    const connections = members.flatMap((member) => member.connections ?? []);
+    expect(new Set(connections.map(({ capacity }) => capacity.basis))).toEqual(
+      new Set(['ultimate', 'allowable', 'test']),
+    );
+    expect(new Set(connections.map(({ kind }) => kind))).toEqual(
+      new Set(['fasteners', 'adhesive', 'continuous']),
+    );
+    expect(part(({ hinges }) => (hinges ?? []).length > 0)).toBeGreaterThan(0.1);
+    expect(part(({ rules }) => rules?.mirror === true)).toBeGreaterThan(0.1);
+    expect(
+      part((member) => (member.connections ?? []).some(({ zones }) => zones !== undefined)),
+    ).toBeGreaterThan(0.1);
+    expect(
+      part((member) => (member.connections ?? []).some(({ bead }) => bead !== undefined)),
+    ).toBeGreaterThan(0.1);
+  });
+});
