@@ -10,7 +10,21 @@ beforeEach(async () => {
 });
 afterEach(() => desk.close());
 
-const plank = () => structuredClone(readExample('two-flat-boards.json')) as Record<string, any>;
+interface Plank extends Record<string, unknown> {
+  title: string;
+  supports: unknown[];
+  pieces: { z: number }[];
+  connections: { rows: number }[];
+}
+
+const plank = () => readExample('two-flat-boards.json') as Plank;
+
+/** The nth of a list, which must be there. */
+function nth<T>(list: readonly T[], i: number): T {
+  const item = list[i];
+  if (item === undefined) throw new Error(`nothing at ${i}`);
+  return item;
+}
 
 describe('who sees what', () => {
   it.each(['ines', 'rolf', 'mira'] as const)('%s sees both projects and their members', async (key) => {
@@ -78,7 +92,7 @@ describe('a draft', () => {
   it('is saved over the version that was read, and answered with its result', async () => {
     const agent = await signedIn(desk, 'rolf');
     const document = plank();
-    document.connections[0].rows = 3;
+    nth(document.connections, 0).rows = 3;
     desk.clock.now += 5000;
     const saved = await agent.put('/api/members/m1/draft').set('If-Match', '"1"').send({ document });
     expect(saved.status).toBe(200);
@@ -102,7 +116,7 @@ describe('a draft', () => {
     theirs.title = 'Theirs';
     await agent.put('/api/members/m1/draft').set('If-Match', '"1"').send({ document: theirs });
     const mine = plank();
-    mine.connections[0].rows = 4;
+    nth(mine.connections, 0).rows = 4;
     const refused = await agent.put('/api/members/m1/draft').set('If-Match', '"1"').send({ document: mine });
     expect(refused.status).toBe(412);
     expect(refused.body.code).toBe('saved-by-another');
@@ -129,7 +143,7 @@ describe('a draft', () => {
   it('that is refused is kept as typed, with its issues, until it is mended', async () => {
     const agent = await signedIn(desk, 'rolf');
     const document = plank();
-    document.pieces[1].z -= 5;
+    nth(document.pieces, 1).z -= 5;
     document.remarkOfMine = 'not a field';
     const kept = await agent.put('/api/members/m1/draft').set('If-Match', '"1"').send({ document });
     expect(kept.status).toBe(200);

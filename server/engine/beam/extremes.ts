@@ -258,9 +258,9 @@ function effect(
 }
 
 /**
- * The largest value between a and b, if it is inside: four parts first, as peaks under different axles may lie
- * side by side, then a parabola through the best three, over and over (Brent 1973, without its golden steps
- * while the parabola stays inside). The upper edge of smooth curves has smooth peaks, so this converges fast.
+ * The largest value between a and b: eight parts first, as peaks under different axles may lie side by side, then
+ * Brent's search (1973) about every part that stands out: parabolas through the best three while they shrink the
+ * bracket, golden sections where they do not.
  */
 function peakBetween(
   f: (x: number) => number,
@@ -269,45 +269,85 @@ function peakBetween(
   fa: number,
   fb: number,
 ): { x: number; value: number } {
-  const h = (b - a) / 4;
-  const values = [fa, f(a + h), f(a + 2 * h), f(a + 3 * h), fb];
-  let best = 0;
-  for (let i = 1; i < 5; i++) if ((values[i] ?? 0) > (values[best] ?? 0)) best = i;
-  const middle = Math.min(3, Math.max(1, best));
-  let x0 = a + (middle - 1) * h;
-  let x1 = a + middle * h;
-  let x2 = a + (middle + 1) * h;
-  let f0 = values[middle - 1] ?? 0;
-  let f1 = values[middle] ?? 0;
-  let f2 = values[middle + 1] ?? 0;
-  if (f1 < f0 || f1 < f2) return f0 > f2 ? { x: x0, value: f0 } : { x: x2, value: f2 };
-  const close = 1e-8 * (b - a);
-  for (let i = 0; i < 30 && x2 - x0 > close; i++) {
-    const p = (x1 - x0) * (f1 - f2);
-    const q = (x1 - x2) * (f1 - f0);
-    const step = (p * (x1 - x0) - q * (x1 - x2)) / (2 * (p - q));
-    let x = x1 - step;
-    const half = x1 - x0 > x2 - x1 ? (x0 + x1) / 2 : (x1 + x2) / 2;
-    if (!(x > x0 && x < x2) || (i % 4 === 3 && Math.abs(x - x1) > close)) x = half;
-    if (Math.abs(x - x1) <= close) break;
-    const value = f(x);
-    if (value >= f1) {
-      if (x < x1) {
-        x2 = x1;
-        f2 = f1;
-      } else {
-        x0 = x1;
-        f0 = f1;
+  const parts = 8;
+  const h = (b - a) / parts;
+  const values = [fa];
+  for (let i = 1; i < parts; i++) values.push(f(a + i * h));
+  values.push(fb);
+  let best = fa >= fb ? { x: a, value: fa } : { x: b, value: fb };
+  const at = (i: number): number => values[i] ?? -Infinity;
+  for (let i = 1; i < parts; i++) {
+    if (at(i) < at(i - 1) || at(i) < at(i + 1)) continue;
+    const found = brentMaximum(f, a + (i - 1) * h, a + i * h, a + (i + 1) * h, at(i));
+    if (found.value > best.value) best = found;
+  }
+  // A peak beside an end shows only in what the last part does.
+  for (const [low, high, end] of [
+    [a, a + h, at(1) < fa],
+    [b - h, b, at(parts - 1) < fb],
+  ] as const) {
+    if (!end) continue;
+    const middle = (low + high) / 2;
+    const found = brentMaximum(f, low, middle, high, f(middle));
+    if (found.value > best.value) best = found;
+  }
+  return best;
+}
+
+function brentMaximum(
+  f: (x: number) => number,
+  low: number,
+  start: number,
+  high: number,
+  startValue: number,
+): { x: number; value: number } {
+  const golden = (3 - Math.sqrt(5)) / 2;
+  const tolerance = 1e-8 * (high - low);
+  let a = low;
+  let b = high;
+  let x = start;
+  let w = start;
+  let v = start;
+  let fx = startValue;
+  let fw = startValue;
+  let fv = startValue;
+  let step = 0;
+  let before = 0;
+  for (let i = 0; i < 60; i++) {
+    const middle = (a + b) / 2;
+    if (Math.abs(x - middle) <= 2 * tolerance - (b - a) / 2) break;
+    let parabola = false;
+    if (Math.abs(before) > tolerance) {
+      const r = (x - w) * (fx - fv);
+      const q0 = (x - v) * (fx - fw);
+      let p = (x - v) * q0 - (x - w) * r;
+      let q = 2 * (q0 - r);
+      if (q > 0) p = -p;
+      q = Math.abs(q);
+      if (Math.abs(p) < Math.abs((q * before) / 2) && p > q * (a - x) && p < q * (b - x)) {
+        before = step;
+        step = p / q;
+        parabola = true;
+        if (x + step - a < 2 * tolerance || b - x - step < 2 * tolerance)
+          step = x < middle ? tolerance : -tolerance;
       }
-      x1 = x;
-      f1 = value;
-    } else if (x < x1) {
-      x0 = x;
-      f0 = value;
+    }
+    if (!parabola) {
+      before = x < middle ? b - x : a - x;
+      step = golden * before;
+    }
+    const u = Math.abs(step) >= tolerance ? x + step : x + (step > 0 ? tolerance : -tolerance);
+    const fu = f(u);
+    if (fu >= fx) {
+      if (u < x) b = x;
+      else a = x;
+      [v, fv, w, fw, x, fx] = [w, fw, x, fx, u, fu];
     } else {
-      x2 = x;
-      f2 = value;
+      if (u < x) a = u;
+      else b = u;
+      if (fu >= fw || w === x) [v, fv, w, fw] = [w, fw, u, fu];
+      else if (fu >= fv || v === x || v === w) [v, fv] = [u, fu];
     }
   }
-  return { x: x1, value: f1 };
+  return { x, value: fx };
 }

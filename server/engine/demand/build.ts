@@ -5,7 +5,8 @@ import type { SectionFlow } from '../flow/section-flow';
 import type { Sideways } from '../flow/sideways';
 import { weightedSum } from '../numeric/piecewise';
 import type { Section } from '../section/section';
-import { InterfaceDemand, SharedDemand } from './demand';
+import { InterfaceDemand } from './demand';
+import { SharedDemand } from './shared';
 import { stackLoads } from './sideways-load';
 
 /**
