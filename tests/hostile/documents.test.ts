@@ -191,4 +191,37 @@ describe('hostile documents', () => {
   it.each(atTheLimits)('at the limits of a document: %s', (_, make) => {
     expect(complaint(make())).toEqual({ outcome: 'calculated', wrong: [] });
   });
+
+  const crowded: [string, object, object][] = [
+    ['a given spacing of a tenth of a micron', { zones: [{ from: 0, to: 2400, spacing: 1e-4 }] }, {}],
+    [
+      'a smallest spacing and a step of a tenth of a micron',
+      {},
+      { spacingMin: 1e-4, spacingStep: 1e-4, spacingMax: 1e-3 },
+    ],
+    ['a smallest spacing of a micron under a heavy load', {}, { spacingMin: 1e-3, spacingStep: 1e-3 }],
+    ['a zone grid of a tenth of a micron', {}, { zoneGrid: 1e-4 }],
+  ];
+  it.each(crowded)('more fasteners or cells than anybody means: %s', (_, change, rules) => {
+    const { outcome, wrong } = complaint({
+      schema: 1,
+      length: 2400,
+      supports: [
+        { id: 'A', x: 0, kind: 'pin' },
+        { id: 'B', x: 2400, kind: 'roller' },
+      ],
+      materials: [{ id: 'w', E: 10_000 }],
+      pieces: [
+        { id: 'a', material: 'w', y: 0, z: 0, width: 100, depth: 50 },
+        { id: 'b', material: 'w', y: 0, z: 50, width: 100, depth: 50 },
+      ],
+      connections: [
+        { pieces: ['a', 'b'], kind: 'fasteners', capacity: { basis: 'allowable', value: 0.7 }, ...change },
+      ],
+      loadCases: [{ id: 'Q', action: 'imposed', loads: [{ kind: 'point', x: 900, value: 60_000 }] }],
+      rules,
+    });
+    expect(wrong).toEqual([]);
+    expect(['calculated', 'invalid-document']).toContain(outcome);
+  });
 });

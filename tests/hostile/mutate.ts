@@ -23,15 +23,22 @@ interface Spot {
 
 const isHolder = (value: unknown): value is Holder => typeof value === 'object' && value !== null;
 
+/** Enough places to choose from; a document may hold far more, nested deeper than a call can go. */
+const MOST_SPOTS = 30_000;
+
 function spotsOf(root: Holder): Spot[] {
   const found: Spot[] = [];
-  const visit = (holder: Holder): void => {
+  const waiting: Holder[] = [root];
+  for (
+    let holder = waiting.pop();
+    holder !== undefined && found.length < MOST_SPOTS;
+    holder = waiting.pop()
+  ) {
     for (const [key, value] of Object.entries(holder)) {
       found.push({ holder, key, value });
-      if (isHolder(value)) visit(value);
+      if (isHolder(value)) waiting.push(value);
     }
-  };
-  visit(root);
+  }
   return found;
 }
 
@@ -177,6 +184,7 @@ const mutations: Mutation[] = [
   atList((list, random) => {
     const times = choose([50, 150, 600, 2500], random) ?? 50;
     const [first] = list;
+    if (isHolder(first) && spotsOf(first).length > 500) return;
     for (let i = 0; i < times; i += 1) {
       const copy = structuredCloneOr(first);
       if (isHolder(copy) && !Array.isArray(copy) && 'id' in copy) copy['id'] = `x${i}`;
