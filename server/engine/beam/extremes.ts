@@ -54,11 +54,9 @@ export function shearPositions(
     let shear = evaluate(loads.fields.shear, place.u, 3 * place.index, 3);
     const positions: Position[] = [];
     if (influence) {
-      const node = system.nodes.findIndex((n) => Math.abs(n.x - x) < 1e-9 * beam.length);
-      const span =
-        node < 0 ? system.spanAt(x) : Math.min(Math.max(side === 1 ? node : node - 1, 0), system.spans - 1);
-      // An axle may stand a hair either side of x: the line is split there.
-      const line = influence.shear(x, span);
+      // A hair beside x: an axle may stand exactly there, at the end of its travel.
+      const beside = Math.min(Math.max(x + side * 1e-11 * beam.length, 0), beam.length);
+      const line = influence.shear(beside, system.spanAt(beside));
       for (const { train, factor } of loads.trains) {
         const t = beam.trains[train];
         if (!t) continue;
@@ -205,17 +203,7 @@ function largestMoving(
       if (!a || !b || b.x <= a.x) continue;
       const fa = sign * (at[i] ?? 0);
       const fb = sign * (at[i + 1] ?? 0);
-      // No value in between can be more than the ends and the steepest slope allow.
-      const slope =
-        q.field === 'moment'
-          ? Math.max(
-              ...[i, i + 1].flatMap((k) => [
-                Math.abs(values.shearMax[k] ?? 0),
-                Math.abs(values.shearMin[k] ?? 0),
-              ]),
-            )
-          : Math.max(Math.abs(fb - fa), ...neighbours(at, i)) / (b.x - a.x);
-      if ((fa + fb) / 2 + (slope * (b.x - a.x)) / 2 <= size) continue;
+      if (mostBetween(beam, values, q, i, a, b, fa, fb) <= size) continue;
       const near: Station = { ...a, side: 1 };
       const found = peakBetween((x) => effect(beam, loads, q, x, near, sign).value * sign, a.x, b.x, fa, fb);
       note(found.x, 1, found.value, near);
@@ -224,9 +212,30 @@ function largestMoving(
   return best;
 }
 
-function neighbours(at: Float64Array, i: number): number[] {
-  const rise = (k: number): number => Math.abs((at[k + 1] ?? at[k] ?? 0) - (at[k] ?? 0));
-  return [rise(Math.max(0, i - 1)), rise(i), i + 2 < at.length ? rise(i + 1) : 0];
+/**
+ * What no value between two stations can exceed: for M what the ends and the steepest shear there allow, for w
+ * what the curvature of a span's deflection can add over so short a part of it, five times over.
+ */
+function mostBetween(
+  beam: Beam,
+  values: StationValues,
+  q: Quantity,
+  i: number,
+  a: Station,
+  b: Station,
+  fa: number,
+  fb: number,
+): number {
+  const h = b.x - a.x;
+  if (q.field === 'bend') {
+    const part = h / beam.system.spanLength(a.span);
+    return Math.max(fa, fb) + 5 * part * part * Math.max(Math.abs(fa), Math.abs(fb));
+  }
+  let slope = 0;
+  for (const k of [i, i + 1]) {
+    slope = Math.max(slope, Math.abs(values.shearMax[k] ?? 0), Math.abs(values.shearMin[k] ?? 0));
+  }
+  return (fa + fb + slope * h) / 2;
 }
 
 /** The largest effect at one x within the segment and span of a station, and the positions that bring it. */

@@ -186,11 +186,16 @@ export class Influence {
     return this.plain(cubic);
   }
 
-  /** Shear at x, in span m. */
+  /** Shear at x, in span m. At the beam's right end, just inside it: an axle on the very end stands right of x. */
   shear(x: number, m: number): InfluenceLine {
     const cubic = this.empty();
     this.addChord(cubic, m, 1);
-    return this.split(cubic, [{ x, m, left: [0, -1, 0, 0], right: [1, -1, 0, 0] }]);
+    const { spans } = this.system;
+    const end = this.starts[spans] ?? 0;
+    const inside = Math.min(x, end - 1e-10 * end);
+    return this.split(cubic, [
+      { x: m === spans - 1 ? inside : x, m, left: [0, -1, 0, 0], right: [1, -1, 0, 0] },
+    ]);
   }
 
   /** M at x of the span's own simply supported beam: ℓ·t(1 − ξ) for a load left of x, ℓ·ξ(1 − t) right of it. */

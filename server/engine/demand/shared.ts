@@ -86,15 +86,16 @@ export class SharedDemand {
     return found;
   }
 
-  /** Pairs of shear and load per length at x that a train can bring. */
+  /**
+   * Pairs of shear and load per length that a train can bring just left or right of x. A hair beside it, as x may
+   * be a sum that misses by rounding the place where an axle leaves the beam or passes another's reach.
+   */
   reach(train: number, x: number, side: -1 | 1): Reach[] {
-    const { influence, system } = this.beam;
+    const { influence, system, length } = this.beam;
     if (!influence) return [];
     return this.cachedReach(`${train} ${x} ${side}`, () => {
-      const node = system.nodes.findIndex((n) => n.x === x);
-      const span =
-        node < 0 ? system.spanAt(x) : Math.min(Math.max(side === 1 ? node : node - 1, 0), system.spans - 1);
-      return reachAt(this.beam, train, x, influence.shear(x, span), this.depth);
+      const beside = Math.min(Math.max(x + side * 1e-11 * length, 0), length);
+      return reachAt(this.beam, train, beside, influence.shear(beside, system.spanAt(beside)), this.depth);
     });
   }
 

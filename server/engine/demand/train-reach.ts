@@ -19,11 +19,13 @@ export function reachAt(
   const train = beam.trains[trainIndex];
   if (!train) return [];
   const { length } = beam;
+  // x − o + o may miss x by rounding, just where an axle stands on the beam's end or at the edge of its spread.
+  const hair = 1e-9 * length;
   const perLength = (middle: number, p: number): number => {
     let sum = 0;
     eachAxle(train, (offset, value) => {
       const at = middle + offset;
-      if (at < 0 || at > length || Math.abs(at - x) > depth) return;
+      if (at < -hair || at > length + hair || Math.abs(at - x) > depth + hair) return;
       const over = spread(Math.min(length, Math.max(0, p + offset)), depth, length);
       sum += value / (over.to - over.from);
     });
@@ -44,11 +46,12 @@ export function reachOver(
   const train = beam.trains[trainIndex];
   if (!train) return [];
   const { length } = beam;
+  const hair = 1e-9 * length;
   const onStretch = (middle: number, p: number): number => {
     let sum = 0;
     eachAxle(train, (offset, value) => {
       const at = middle + offset;
-      if (at < 0 || at > length) return;
+      if (at < -hair || at > length + hair) return;
       const over = spread(Math.min(length, Math.max(0, p + offset)), depth, length);
       const common = Math.min(b, over.to) - Math.max(a, over.from);
       if (common > 0) sum += (value * common) / (over.to - over.from);

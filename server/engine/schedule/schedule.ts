@@ -99,7 +99,7 @@ export function scheduleInterface(
   schedule.unitCapacity = unitCapacity;
   const carriedBySpacing = rows * unitCapacity;
   if (peakCombination >= 0) schedule.requiredSpacing = carriedBySpacing / peak.value;
-  const spacings = allowedSpacings(rules, bead);
+  const spacings = allowedSpacings(rules);
   schedule.spacings = spacings;
 
   const zones = connection.zones
@@ -136,7 +136,7 @@ export function scheduleInterface(
   } else {
     placeFasteners(schedule, zones, demand, beam.length);
   }
-  adviseOnSchedule(schedule, item, zones, bead);
+  adviseOnSchedule(schedule, item, zones);
   return schedule;
 }
 
@@ -209,7 +209,7 @@ function placeFasteners(
   };
 }
 
-function adviseOnSchedule(schedule: Schedule, item: Interface, zones: readonly Zone[], bead: number): void {
+function adviseOnSchedule(schedule: Schedule, item: Interface, zones: readonly Zone[]): void {
   const { fasteners, worstFastener, spacings, unitCapacity } = schedule;
   const advise = (code: string, message: string): void => {
     if (schedule.status === 'ok') schedule.status = 'advice';
@@ -224,7 +224,7 @@ function adviseOnSchedule(schedule: Schedule, item: Interface, zones: readonly Z
     );
   }
   if (schedule.pinned && spacings) {
-    const least = Math.max(schedule.rules.spacingMin, bead);
+    const least = schedule.rules.spacingMin;
     const outside = zones.find(
       (z) => z.spacing < least * (1 - 1e-9) || z.spacing > schedule.rules.spacingMax * (1 + 1e-9),
     );
@@ -250,7 +250,7 @@ function noSchedule(
     return {
       code: 'no-schedule',
       interface: item.id,
-      message: `${item.id}: no multiple of the step of ${round(rules.spacingStep)} mm lies between ${round(Math.max(rules.spacingMin, bead))} and ${round(rules.spacingMax)} mm. Change the step or the limits.`,
+      message: `${item.id}: no multiple of the step of ${round(rules.spacingStep)} mm lies between ${round(rules.spacingMin)} and ${round(rules.spacingMax)} mm. Change the step or the limits.`,
     };
   }
   const required = s.requiredSpacing ?? Infinity;

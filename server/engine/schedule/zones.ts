@@ -17,11 +17,11 @@ export interface Spacings {
 /** To spare when a spacing is floored to its step, so that one exactly on a step keeps it. */
 const spare = 1e-9;
 
-export function allowedSpacings(rules: Rules, least: number): Spacings {
+export function allowedSpacings(rules: Rules): Spacings {
   const step = rules.spacingStep;
   return {
     step,
-    smallest: Math.ceil(Math.max(rules.spacingMin, least) / step - spare) * step,
+    smallest: Math.ceil(rules.spacingMin / step - spare) * step,
     largest: Math.floor(rules.spacingMax / step + spare) * step,
   };
 }

@@ -1,6 +1,6 @@
 import type { CalculationResult, InterfaceResult } from '@shared/schemas/result';
 import { at } from './linear';
-import type { SecondInterface, SecondResult, SecondSide } from './second-result';
+import { SAMPLED, type SecondInterface, type SecondResult, type SecondSide } from './second-result';
 
 /** Both methods side by side, figure by figure. */
 
@@ -16,8 +16,6 @@ export interface Comparison {
 
 /** Where both are exact they agree to this. */
 export const EXACT = 1e-6;
-/** Where positions are sampled the second method may miss this much of the worst. */
-export const SAMPLED = 2e-3;
 /** Figures this far below the size of their kind are compared with that size. */
 const SMALL = 1e-3;
 
@@ -90,7 +88,12 @@ function compareSections(
     const alike = own.id === other.id && own.orientation === other.orientation;
     to.whole(`${name}.orientation`, alike && own.connected === other.connected ? 1 : 0, 1);
     to.figure(`${name}.contact`, own.contact, other.contact, 0);
-    to.figure(`${name}.firstMoment`, orNone(own.firstMoment), orNone(other.firstMoment), second.I / second.depth);
+    to.figure(
+      `${name}.firstMoment`,
+      orNone(own.firstMoment),
+      orNone(other.firstMoment),
+      second.I / second.depth,
+    );
     to.figure(`${name}.flowPerShear`, own.flowPerShear, other.flowPerShear, 1 / second.depth);
   });
 }
@@ -194,6 +197,31 @@ export function sameZones(first: InterfaceResult, second: SecondInterface): bool
   );
 }
 
+/**
+ * The least cost is one, though several schedules may have it. Under a sampled train it lies between that for the demand found
+ * and that for a demand raised by what sampling may miss, which can be steps of the spacing apart. −1: no schedule.
+ */
+function compareCosts(to: Comparer, name: string, first: InterfaceResult, second: SecondInterface): void {
+  const own =
+    first.zones.length === 0
+      ? Infinity
+      : second.rows * first.zones.reduce((sum, zone) => sum + (zone.to - zone.from) / zone.spacing, 0);
+  const least = second.cost ?? Infinity;
+  const most = to.sampled ? (second.costRaised ?? Infinity) : least;
+  const nearest = Math.min(Math.max(own, least), most);
+  const shown = (cost: number): number => (cost === Infinity ? -1 : cost);
+  to.figure(name, shown(own), shown(nearest), 0);
+}
+
+/** Utilisation of a schedule: of the very zones that the first chose, by the flows of the second. */
+function utilisationOf(first: InterfaceResult, second: SecondInterface): number {
+  if (first.zones.length === 0 || second.requiredSpacing === null) return second.utilisation;
+  const limit = second.requiredSpacing * second.peakFlow.value;
+  return Math.max(
+    ...first.zones.map(({ from, to, spacing }) => (spacing * flowIn(second, from, to)) / limit),
+  );
+}
+
 function compareZones(to: Comparer, name: string, first: InterfaceResult, second: SecondInterface): void {
   const flow = second.peakFlow.value;
   // spacing × flow ÷ utilisation is what the connection may carry, the same for every zone
@@ -207,11 +235,7 @@ function compareZones(to: Comparer, name: string, first: InterfaceResult, second
       Math.ceil((zone.to - zone.from) / zone.spacing - 1e-9),
     );
   });
-  const cost = first.zones.reduce((sum, zone) => sum + (zone.to - zone.from) / zone.spacing, 0) * second.rows;
-  if (sameZones(first, second) || !first.pinned) {
-    // a schedule for sampled demand may take a step more; never is the first's cheaper
-    to.demand(`${name}.cost`, first.zones.length === 0 ? -1 : cost, second.cost ?? -1, 0);
-  }
+  if (!first.pinned) compareCosts(to, `${name}.cost`, first, second);
   if (!sameZones(first, second)) return;
   const { fasteners } = first;
   const other = second.fasteners;
@@ -246,7 +270,7 @@ function compareInterface(
   const name = `interfaces.${second.id}`;
   to.figure(`${name}.capacity`, first.capacity, second.capacity, 0);
   to.demand(`${name}.peakFlow`, first.peakFlow.value, second.peakFlow.value, largestFlow);
-  to.demand(`${name}.utilisation`, first.utilisation, second.utilisation, 1);
+  to.demand(`${name}.utilisation`, first.utilisation, utilisationOf(first, second), 1);
   to.demand(
     `${name}.requiredSpacing`,
     first.requiredSpacing === null ? 0 : 1 / first.requiredSpacing,

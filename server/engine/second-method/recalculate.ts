@@ -17,7 +17,14 @@ import {
   type Peak,
 } from './scan';
 import { allowedSpacings, fewest, gridBorders, type ZoneRules } from './schedule';
-import type { SecondInterface, SecondPlace, SecondResult, SecondSide, SecondStation } from './second-result';
+import {
+  SAMPLED,
+  type SecondInterface,
+  type SecondPlace,
+  type SecondResult,
+  type SecondSide,
+  type SecondStation,
+} from './second-result';
 import { firstMoment, type Interface } from './section';
 import { trainRange } from './trains';
 
@@ -137,9 +144,14 @@ function peaksAt(scanned: Scanned, felt: Felt): Peak[] {
 interface Spaced {
   requiredSpacing: number | null;
   zones: SecondInterface['zones'];
+  lengthsRaised: number | null;
   noSchedule: boolean;
   utilisation: number;
 }
+
+/** Σ length/spacing. */
+const lengthsOver = (zones: readonly { from: number; to: number; spacing: number }[]): number =>
+  zones.reduce((sum, zone) => sum + (zone.to - zone.from) / zone.spacing, 0);
 
 function spacedZones(
   scanned: Scanned,
@@ -168,10 +180,12 @@ function spacedZones(
     perRow: perRow(zone),
     utilisation: zone.spacing * demandIn(zone.from, zone.to),
   }));
+  const raised = pinned ?? fewest(model.length, rules, (from, to) => demandIn(from, to) * (1 + SAMPLED));
   const least = allowedSpacings(rules)?.least ?? rules.spacingMin;
   return {
     requiredSpacing: whole === 0 ? null : 1 / whole,
     zones,
+    lengthsRaised: raised === null ? null : lengthsOver(raised),
     noSchedule: found === null,
     utilisation: found === null ? least * whole : Math.max(...zones.map((zone) => zone.utilisation)),
   };
@@ -228,10 +242,9 @@ function interfaceOf(scanned: Scanned, each: Interface, connection: Connection):
     peakFlow: placeOf(model, worst),
     requiredSpacing: spaced?.requiredSpacing ?? null,
     zones,
-    cost:
-      zones.length === 0
-        ? null
-        : strength.rows * zones.reduce((sum, zone) => sum + (zone.to - zone.from) / zone.spacing, 0),
+    cost: zones.length === 0 ? null : strength.rows * lengthsOver(zones),
+    costRaised:
+      spaced === null || spaced.lengthsRaised === null ? null : strength.rows * spaced.lengthsRaised,
     demand: gaps.map((gap, g) => ({ ...gap, flow: at(peaks, g).value })),
     fasteners,
     utilisation,

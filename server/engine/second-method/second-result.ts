@@ -1,5 +1,8 @@
 /** What the second method finds: plain figures in the contract's units. */
 
+/** Where positions are sampled the second method may miss this much of the worst. */
+export const SAMPLED = 2e-3;
+
 export interface SecondPlace {
   value: number;
   x: number;
@@ -32,6 +35,8 @@ export interface SecondInterface {
   zones: { from: number; to: number; spacing: number; perRow: number; utilisation: number }[];
   /** rows, times Σ length/spacing over the zones: what the schedule makes least */
   cost: number | null;
+  /** the same for a demand that is higher by `SAMPLED`: between the two lies the least cost under a sampled train */
+  costRaised: number | null;
   /** the largest flow within each gap between two events, with which any zones can be checked */
   demand: { from: number; to: number; flow: number }[];
   fasteners: { count: number; positions: number[]; forces: number[]; utilisation: number } | null;
