@@ -51,15 +51,7 @@ const database = ['drizzle-orm', 'better-sqlite3', 'drizzle-kit'];
 /** Lucia is in maintenance only: one file of the session feature knows it. */
 const lucia = ['lucia', '@lucia-auth/*'];
 /** Packages of the browser, which the server has no use for. */
-const browser = [
-  'react',
-  'react-dom',
-  'react-router-dom',
-  'recharts',
-  'lucide-react',
-  '@tanstack/*',
-  '@testing-library/*',
-];
+const browser = ['react', 'react-dom', 'react-router-dom', '@tanstack/*', '@testing-library/*'];
 /** Packages of the server, which must never reach the browser. */
 const serverOnly = [
   'express',

@@ -66,6 +66,22 @@ describe('package.json', () => {
     }
   });
 
+  it('lists no package that nothing uses', () => {
+    // used by their commands in the scripts, by the compiler alone, or by name in vitest's settings
+    const tools = /^(@types\/|tsx$|typescript$|prettier$|eslint$|drizzle-kit$|vite$)/;
+    const sources = textFiles.filter((path) => /\.(ts|tsx|js|css)$/.test(path)).map(read);
+    for (const name of Object.keys({ ...manifest.dependencies, ...manifest.devDependencies })) {
+      if (tools.test(name)) continue;
+      const used = new RegExp(
+        `(from|import|require\\(|resolve\\(|import\\(|@import)\\s*\\(?['"]${name}(/[^'"]*)?['"]`,
+      );
+      expect(
+        sources.some((text) => used.test(text)),
+        name,
+      ).toBe(true);
+    }
+  });
+
   it('checks types, lint, format and tests in one go', () => {
     const said = manifest.scripts['check'] ?? '';
     for (const part of ['types', 'lint', 'format:check', 'test:unit'])
