@@ -68,7 +68,7 @@ describe('package.json', () => {
 
   it('lists no package that nothing uses', () => {
     // used by their commands in the scripts, by the compiler alone, or by name in vitest's settings
-    const tools = /^(@types\/|tsx$|typescript$|prettier$|eslint$|drizzle-kit$|vite$)/;
+    const tools = /^(@types\/|tsx$|typescript$|prettier$|eslint$|drizzle-kit$|vite$|jsdom$)/;
     const sources = textFiles.filter((path) => /\.(ts|tsx|js|css)$/.test(path)).map(read);
     for (const name of Object.keys({ ...manifest.dependencies, ...manifest.devDependencies })) {
       if (tools.test(name)) continue;
