@@ -70,6 +70,52 @@ describe('The comparison', () => {
   });
 });
 
+describe('The comparison of schedules', () => {
+  const seed = 29;
+  const outcome = calculateMember(randomMember(seed));
+  if (!outcome.ok) throw new Error('the member of this test is refused');
+  const { document, result } = outcome;
+  const second = recalculate(document, result.envelope.x);
+  /** The figures that differ once the first fastened interface with a schedule of its own is changed. */
+  const named = (change: (each: (typeof result.interfaces)[number]) => void): string[] => {
+    const off = structuredClone(result);
+    const graded = off.interfaces.find(({ fasteners, pinned }) => (fasteners?.count ?? 0) > 0 && !pinned);
+    if (graded === undefined) throw new Error(`member ${seed} has no fastened interface`);
+    change(graded);
+    return compare(off, second)
+      .filter(({ same }) => !same)
+      .map(({ figure }) => figure.replace(/J\d+/, 'J'));
+  };
+
+  it('finds nothing where nothing is changed', () => {
+    expect(named(() => undefined)).toEqual([]);
+  });
+
+  it('notices a spacing one step closer, which costs more', () => {
+    const found = named(({ zones }) => {
+      const zone = zones[0];
+      if (zone !== undefined) zone.spacing -= document.rules.spacingStep;
+    });
+    expect(found).toContain('interfaces.J.cost');
+  });
+
+  it('notices a spacing one step wider, which is over what the flow allows', () => {
+    const found = named(({ zones }) => {
+      const zone = zones[0];
+      if (zone !== undefined) zone.spacing += document.rules.spacingStep;
+    });
+    expect(found).toContain('interfaces.J.zones.0.utilisation');
+  });
+
+  it('notices one force of one fastener', () => {
+    const found = named(({ fasteners }) => {
+      const row = fasteners?.forces[0];
+      if (row !== undefined) row[0] = (row[0] ?? 0) * (1 + 3e-6);
+    });
+    expect(found).toEqual(['interfaces.J.forces.0.0']);
+  });
+});
+
 describe('The random members', () => {
   const members = Array.from({ length: 520 }, (_, seed) => randomMember(seed));
   const part = (holds: (member: (typeof members)[number]) => boolean): number =>
