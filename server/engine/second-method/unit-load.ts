@@ -53,7 +53,7 @@ export function prepareUnitLoad(beam: Beam): UnitLoad {
   });
 
   const last = elements.length - 1;
-  // called millions of times: searched, read and shaped in place rather than by the helpers of other files
+  // called millions of times: searched, read and shaped in place not through other files’ functions
   const froms = Float64Array.from(elements, ({ from }) => from);
   const lengths = Float64Array.from(elements, ({ from, to }) => to - from);
   const freedoms = Int32Array.from(elements.flatMap((element) => element.freedoms));
