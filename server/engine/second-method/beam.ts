@@ -80,14 +80,14 @@ function wishedNodes(document: MemberDocument): number[] {
 }
 
 /**
- * Nodes at ends, supports and hinges, and at loads and even steps as far as no element becomes so short beside the others
- * that digits are lost: loads inside an element are taken exactly, so no node is needed at them.
+ * Nodes at ends, supports and hinges; at loads and even steps only a few, and none that would make an element short beside the
+ * others, for both cost digits. Loads inside an element are taken exactly, so no node is needed at them.
  */
 function placeNodes(document: MemberDocument, needed: readonly number[]): number[] {
   const nodes = [...needed];
-  const gap = document.length / 50;
+  const gap = document.length / 20;
   for (const place of wishedNodes(document)) {
-    if (nodes.length >= needed.length + 24) break;
+    if (nodes.length >= needed.length + 8) break;
     if (nodes.every((node) => Math.abs(node - place) >= gap)) nodes.push(place);
   }
   return nodes.sort((a, b) => a - b);
