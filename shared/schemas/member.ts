@@ -24,6 +24,8 @@ export const documentLimits = {
   text: 200,
   testValues: 1000,
   zoneCells: 2000,
+  /** fasteners or beads of one interface */
+  fasteners: 50_000,
 } as const;
 
 /** Lengths (mm) and other magnitudes beyond these are a slip of the keyboard, and would cost all precision. */

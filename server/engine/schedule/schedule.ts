@@ -1,6 +1,7 @@
-import type { MemberDocument, Rules } from '@shared/schemas/member';
+import { documentLimits, type MemberDocument, type Rules } from '@shared/schemas/member';
 import type { InterfaceResult, Notice } from '@shared/schemas/result';
 import { shearPositions } from '../beam/extremes';
+import { refuse } from '../refused';
 import { rulesOf } from '../input/places';
 import { rowsOf } from '../flow/section-flow';
 import type { FlowPeak, InterfaceDemand } from '../demand/demand';
@@ -114,6 +115,7 @@ export function scheduleInterface(
     schedule.notices.push(noSchedule(item, demand, schedule, capacity, bead));
     return schedule;
   }
+  refuseCrowd(item, zones, rows);
   const edges = [zones[0]?.from ?? 0, ...zones.map((z) => z.to)];
   schedule.zoneFlows = largestInCells(demand, edges, nothing);
   schedule.zones = zones.map((zone, i) => ({
@@ -138,6 +140,20 @@ export function scheduleInterface(
   }
   adviseOnSchedule(schedule, item, zones);
   return schedule;
+}
+
+/** More fasteners than anybody drives into one interface: a slip of the keyboard, and more than can be told. */
+function refuseCrowd(item: Interface, zones: readonly Zone[], rows: number): void {
+  const count = zones.reduce((sum, zone) => sum + perRow(zone), 0) * rows;
+  if (count <= documentLimits.fasteners) return;
+  const pinned = item.connection?.zones !== undefined;
+  const tightest = zones.reduce((a, b) => (b.spacing < a.spacing ? b : a));
+  const given = item.connection?.zones?.findIndex((z) => z.spacing === tightest.spacing) ?? -1;
+  refuse(
+    'invalid-document',
+    pinned ? `connections.${item.connectionIndex}.zones.${Math.max(given, 0)}.spacing` : 'rules.spacingMin',
+    `${item.id} would take ${count} ${item.connection?.kind === 'continuous' ? 'beads' : 'fasteners'}; at most ${documentLimits.fasteners} are calculated. Use a wider spacing, fewer rows or a larger smallest spacing.`,
+  );
 }
 
 function emptyRows(rows: number): number[][] {
@@ -256,12 +272,12 @@ function noSchedule(
   const required = s.requiredSpacing ?? Infinity;
   const short = smallest / required;
   const help = [
-    `a capacity of ${round(capacity * short)} instead of ${round(capacity)} ${bead > 0 ? 'N/mm' : 'N a fastener'}`,
+    `a capacity of ${round(towards(capacity * short, 'up'))} instead of ${round(capacity)} ${bead > 0 ? 'N/mm' : 'N a fastener'}`,
   ];
   if (bead === 0) help.unshift(`${Math.ceil(s.rows * short - 1e-9)} rows instead of ${s.rows}`);
   if (!demand.isCrossed) {
     help.push(
-      `a layup with a shear flow of ${round((demand.flowPerShear / short) * 1000)} instead of ${round(demand.flowPerShear * 1000)} N/m for each newton of shear`,
+      `a layup with a shear flow of ${round(towards((demand.flowPerShear / short) * 1000, 'down'))} instead of ${round(demand.flowPerShear * 1000)} N/m for each newton of shear`,
     );
   }
   const list =
@@ -271,6 +287,13 @@ function noSchedule(
     interface: item.id,
     message: `${item.id}: no schedule is possible. At x = ${round(s.peak.x)} mm the spacing would have to be ${round(required)} mm or less, and the smallest allowed is ${round(smallest)} mm. What would help: ${list}.`,
   };
+}
+
+/** Four figures, on the side that helps: what is said to be enough must be enough. */
+function towards(value: number, side: 'up' | 'down'): number {
+  if (!(value > 0) || !Number.isFinite(value)) return value;
+  const unit = 10 ** (Math.floor(Math.log10(value)) - 3);
+  return (side === 'up' ? Math.ceil(value / unit - 1e-9) : Math.floor(value / unit + 1e-9)) * unit;
 }
 
 /** Four figures for a sentence. */

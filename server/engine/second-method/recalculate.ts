@@ -16,7 +16,7 @@ import {
   type Gap,
   type Peak,
 } from './scan';
-import { allowedSpacings, fewest, gridBorders, type ZoneRules } from './schedule';
+import { fewest, gridBorders, type ZoneRules } from './schedule';
 import {
   SAMPLED,
   type SecondInterface,
@@ -181,7 +181,7 @@ function spacedZones(
     utilisation: zone.spacing * demandIn(zone.from, zone.to),
   }));
   const raised = pinned ?? fewest(model.length, rules, (from, to) => demandIn(from, to) * (1 + SAMPLED));
-  const least = allowedSpacings(rules)?.least ?? rules.spacingMin;
+  const least = Math.ceil(rules.spacingMin / rules.spacingStep - 1e-9) * rules.spacingStep;
   return {
     requiredSpacing: whole === 0 ? null : 1 / whole,
     zones,

@@ -21,7 +21,7 @@ export function gridBorders(length: number, rules: ZoneRules): number[] {
 }
 
 /** Smallest and largest spacing allowed; null where no multiple of the step lies within the limits. */
-export function allowedSpacings(rules: ZoneRules): { least: number; most: number } | null {
+function allowedSpacings(rules: ZoneRules): { least: number; most: number } | null {
   const least = Math.ceil(rules.spacingMin / rules.spacingStep - 1e-9) * rules.spacingStep;
   const most = Math.floor(rules.spacingMax / rules.spacingStep + 1e-9) * rules.spacingStep;
   return least > most + 1e-9 ? null : { least, most };
