@@ -39,6 +39,8 @@ afterAll(() => {
 interface Figures {
   passed: number;
   failed: number;
+  /** begun and never ended */
+  lost?: number;
   files?: { status: string; tests: string[] }[];
 }
 
@@ -49,6 +51,7 @@ function run(install: number, status: number, figures: Figures | string) {
       : JSON.stringify({
           numPassedTests: figures.passed,
           numFailedTests: figures.failed,
+          numTotalTests: figures.passed + figures.failed + (figures.lost ?? 0),
           testResults: (figures.files ?? []).map((file) => ({
             status: file.status,
             assertionResults: file.tests.map((test) => ({ status: test })),
@@ -90,6 +93,9 @@ describe('.ci/run', () => {
     ];
     expect(run(0, 1, { passed: 3, failed: 1, files })).toEqual({ last: '3 passed, 2 failed', code: 1 });
   });
+  it('tests that were never ended, because their process died, are failures', () => {
+    expect(run(0, 1, { passed: 41, failed: 2, lost: 4 })).toEqual({ last: '41 passed, 6 failed', code: 1 });
+  });
   it('something outside the tests goes wrong', () => {
     expect(run(0, 1, { passed: 41, failed: 0 })).toEqual({ last: '41 passed, 1 failed', code: 1 });
   });
@@ -99,7 +105,7 @@ describe('.ci/run', () => {
   it('failures with a status that says nothing of them', () => {
     expect(run(0, 0, { passed: 5, failed: 2 })).toEqual({ last: '5 passed, 2 failed', code: 1 });
   });
-  it.each(['', '{"numPassedTests": 4', '{"numPassedTests":"4","numFailedTests":0,"testResults":[]}'])(
+  it.each(['', '{"numPassedTests": 4', '{"numPassedTests":4,"numFailedTests":0,"testResults":[]}'])(
     'figures that cannot be read: %s',
     (figures) => {
       expect(run(0, 0, figures)).toEqual({ last: '0 passed, 1 failed', code: 1 });
