@@ -26,6 +26,12 @@ interface Violation {
 
 /** What axe finds wrong with the page as it stands. */
 const faultsOf = async (page: Page): Promise<string[]> => {
+  // What is still fading in has not its own colours yet.
+  await page.waitForFunction(() =>
+    document
+      .getAnimations()
+      .every((one) => one.playState === 'finished' || one.effect?.getComputedTiming().endTime === Infinity),
+  );
   await page.evaluate(axe);
   const found = await page.evaluate<Violation[]>(
     `axe.run(document, { resultTypes: ['violations'] }).then((result) => result.violations)`,
