@@ -103,6 +103,18 @@ describe('a session', () => {
     expect((await supertest(desk.app).post('/api/session').send(credentials('rolf'))).status).toBe(200);
   });
 
+  it('pauses an address that nobody has in the same way, so that neither tells itself apart', async () => {
+    const wrong = { email: 'nobody@office.example', password: 'not the right one' };
+    for (let i = 0; i < 10; i += 1) {
+      expect((await supertest(desk.app).post('/api/session').send(wrong)).status).toBe(401);
+    }
+    const paused = await supertest(desk.app).post('/api/session').send(wrong);
+    expect(paused.status).toBe(423);
+    expect(Number(paused.headers['retry-after'])).toBe(600);
+    desk.clock.now += 10 * minute + 1;
+    expect((await supertest(desk.app).post('/api/session').send(wrong)).status).toBe(401);
+  });
+
   it('forgets wrong tries after a right one', async () => {
     const wrong = { ...credentials('mira'), password: 'not the right one' };
     for (let i = 0; i < 9; i += 1) await supertest(desk.app).post('/api/session').send(wrong);

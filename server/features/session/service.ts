@@ -7,7 +7,14 @@ import type { PersonRow, SessionRepo } from './repo';
 
 const minute = 60_000;
 const hour = 60 * minute;
-const rules = { idle: 12 * hour, longest: 30 * 24 * hour, tries: 10, pause: 10 * minute, touchEvery: minute };
+const rules = {
+  idle: 12 * hour,
+  longest: 30 * 24 * hour,
+  tries: 10,
+  pause: 10 * minute,
+  touchEvery: minute,
+  strangers: 10_000,
+};
 
 export interface SessionService {
   cookieName: string;
@@ -34,7 +41,19 @@ export function sessionService(deps: {
   const wrong = (): HttpProblem =>
     new HttpProblem('wrong-credentials', 'The e-mail address and the password do not go together.');
 
-  const refuseWhilePaused = (row: PersonRow, now: number): void => {
+  /** Addresses nobody has are counted and paused like those of people, or the answer would tell them apart. */
+  const strangers = new Map<string, { wrongTries: number; pausedUntil: number | null }>();
+  const countStranger = (address: string, now: number): void => {
+    if (strangers.size >= rules.strangers) strangers.clear();
+    const tries = (strangers.get(address)?.wrongTries ?? 0) + 1;
+    const paused = tries >= rules.tries;
+    strangers.set(address, {
+      wrongTries: paused ? 0 : tries,
+      pausedUntil: paused ? now + rules.pause : null,
+    });
+  };
+
+  const refuseWhilePaused = (row: Pick<PersonRow, 'pausedUntil'>, now: number): void => {
     if (row.pausedUntil === null || row.pausedUntil <= now) return;
     const seconds = Math.ceil((row.pausedUntil - now) / 1000);
     throw new HttpProblem(
@@ -50,7 +69,10 @@ export function sessionService(deps: {
       const now = clock();
       const row = repo.byEmail(email);
       if (!row?.active) {
+        const address = email.trim().toLowerCase();
+        refuseWhilePaused(strangers.get(address) ?? { pausedUntil: null }, now);
         await compareWithNobody(password);
+        countStranger(address, now);
         throw wrong();
       }
       refuseWhilePaused(row, now);
